@@ -1,0 +1,26 @@
+namespace TensorRG.Tensors.Decompositions;
+
+/// <summary>Settings of the block subspace iteration; the defaults are what the schemes use.</summary>
+public sealed record SubspaceOptions
+{
+    /// <summary>Vectors iterated beyond those expected to be kept, in each sector.</summary>
+    public int Oversampling { get; init; } = 20;
+
+    /// <summary>Fewest power steps (one application of M^H and one of M each).</summary>
+    public int MinPowerSteps { get; init; } = 2;
+
+    /// <summary>Most power steps before falling through to a full decomposition.</summary>
+    public int MaxPowerSteps { get; init; } = 8;
+
+    /// <summary>Stop when no kept singular value changes by more than this fraction over half a power step.</summary>
+    public double Tolerance { get; init; } = 1e-9;
+
+    /// <summary>A kept value this close, in vectors, to the end of its sector's block makes the block grow.</summary>
+    public int Margin { get; init; } = 8;
+
+    /// <summary>Fraction of a sector's dimension above which the block is no cheaper than a full decomposition.</summary>
+    public double DenseFraction { get; init; } = 0.5;
+
+    /// <summary>Largest sector for which a full decomposition is used as fall-through.</summary>
+    public int LargestDenseSector { get; init; } = 2500;
+}
