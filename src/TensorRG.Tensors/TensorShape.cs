@@ -88,6 +88,26 @@ public static class TensorShape
         return front.Permute([.. Enumerable.Range(n, axis), .. Enumerable.Range(0, n), .. Enumerable.Range(n + axis, front.Rank - n - axis)]);
     }
 
+    /// <summary>The same tensor with one leg's arrow reversed and its charges negated: a relabelling, no change of numbers.</summary>
+    /// <typeparam name="T">Element type.</typeparam>
+    /// <param name="tensor">Any tensor.</param>
+    /// <param name="axis">The leg.</param>
+    public static Tensor<T> ReverseArrow<T>(this Tensor<T> tensor, int axis)
+        where T : unmanaged, INumberBase<T>
+    {
+        ArgumentNullException.ThrowIfNull(tensor);
+        Leg old = tensor.Legs[axis];
+        var reversed = new Leg(old.Group, old.Dual.Arrow, old.Sectors.Select(s => new Sector(old.Group.Negate(s.Charge), s.Dimension)));
+        Tensor<T> result = Tensor<T>.Allocate(tensor.Legs.SetItem(axis, reversed), tensor.Flux, clear: false);
+        for (int sector = 0; sector < old.Sectors.Length; sector++)
+        {
+            using Tensor<T> slice = tensor.Slice(axis, sector, 0, old.Sectors[sector].Dimension);
+            result.Assign(axis, reversed.IndexOf(old.Group.Negate(old.Sectors[sector].Charge)), 0, slice);
+        }
+
+        return result;
+    }
+
     /// <summary>Some of the states of one sector of a leg; the leg keeps only that sector.</summary>
     /// <typeparam name="T">Element type.</typeparam>
     /// <param name="tensor">Any tensor.</param>
