@@ -1,0 +1,141 @@
+using System.Runtime.CompilerServices;
+using System.Runtime.Intrinsics;
+
+namespace TensorRG.Tensors.Kernels.Decompositions;
+
+/// <summary>
+/// Plane rotations of neighbouring rows, collected sweep by sweep and applied together, so that a strip of columns stays
+/// in cache while many sweeps pass over it. Rotation k turns rows (k, k+1) into (c z_k - s z_(k+1), s z_k + c z_(k+1)).
+/// </summary>
+internal sealed unsafe class RotationBatch : IDisposable
+{
+    private const int Lanes = 4;
+    private const int StripWidth = 16;
+
+    private readonly int _size;
+    private readonly int _columns;
+    private readonly AlignedBuffer<double> _rows;
+    private readonly double[] _rotations;
+    private readonly List<(int Start, int First, int Count, bool Ascending)> _sweeps = [];
+    private int _used;
+
+    /// <summary>An empty batch acting on the rows of the identity.</summary>
+    /// <param name="size">Number of rows and of columns.</param>
+    /// <param name="reversed">Whether to start from the identity with its rows in reverse order.</param>
+    public RotationBatch(int size, bool reversed = false)
+    {
+        _size = size;
+        _columns = (size + StripWidth - 1) / StripWidth * StripWidth;
+        _rows = BufferPool.RentZeroed<double>((long)size * _columns);
+        for (int i = 0; i < size; i++)
+            Row(i)[reversed ? size - 1 - i : i] = 1;
+        _rotations = new double[Math.Max(2 * size, Math.Min(64 * size, 1 << 16))];
+    }
+
+    /// <summary>Row i, of which the first <c>size</c> elements count. Valid after <see cref="Flush"/>.</summary>
+    public double* Row(int i) => _rows.Data + ((nint)i * _columns);
+
+    /// <summary>
+    /// Room for one sweep of rotations: c of the rotation of rows (first + i, first + i + 1) at 2 i, s at 2 i + 1.
+    /// </summary>
+    /// <param name="first">Upper row of the first pair.</param>
+    /// <param name="count">Number of rotations.</param>
+    /// <param name="ascending">Whether the first pair is rotated first, or last.</param>
+    public Span<double> AddSweep(int first, int count, bool ascending)
+    {
+        if (_used + (2 * count) > _rotations.Length)
+            Flush();
+        _sweeps.Add((_used, first, count, ascending));
+        _used += 2 * count;
+        return _rotations.AsSpan(_used - (2 * count), 2 * count);
+    }
+
+    /// <summary>Applies all sweeps collected so far.</summary>
+    public void Flush()
+    {
+        if (_sweeps.Count == 0)
+            return;
+        for (int strip = 0; strip < _columns / StripWidth; strip++)
+            ApplyToStrip(strip * StripWidth);
+        _sweeps.Clear();
+        _used = 0;
+    }
+
+    /// <summary>Gives the memory back.</summary>
+    public void Dispose() => _rows.Dispose();
+
+    private void ApplyToStrip(int column)
+    {
+        using AlignedBuffer<double> packed = BufferPool.Rent<double>((long)_size * StripWidth);
+        double* strip = packed.Data;
+        for (int i = 0; i < _size; i++)
+            new Span<double>(Row(i) + column, StripWidth).CopyTo(new Span<double>(strip + (i * StripWidth), StripWidth));
+        fixed (double* rotations = _rotations)
+        {
+            foreach ((int start, int first, int count, bool ascending) in _sweeps)
+            {
+                if (ascending)
+                    Ascend(strip + (first * StripWidth), rotations + start, count);
+                else
+                    Descend(strip + (first * StripWidth), rotations + start, count);
+            }
+        }
+
+        for (int i = 0; i < _size; i++)
+            new Span<double>(strip + (i * StripWidth), StripWidth).CopyTo(new Span<double>(Row(i) + column, StripWidth));
+    }
+
+    [MethodImpl(MethodImplOptions.AggressiveOptimization)]
+    private static void Ascend(double* z, double* rotations, int count)
+    {
+        Vector256<double> a = Vector256.Load(z), b = Vector256.Load(z + Lanes);
+        Vector256<double> d = Vector256.Load(z + (2 * Lanes)), e = Vector256.Load(z + (3 * Lanes));
+        for (int i = 0; i < count; i++, z += StripWidth, rotations += 2)
+        {
+            Vector256<double> c = Vector256.Create(rotations[0]), s = Vector256.Create(rotations[1]);
+            Vector256<double> p = Vector256.Load(z + StripWidth), q = Vector256.Load(z + StripWidth + Lanes);
+            Vector256<double> r = Vector256.Load(z + StripWidth + (2 * Lanes)), t = Vector256.Load(z + StripWidth + (3 * Lanes));
+            Vector256.Store(Vector256.FusedMultiplyAdd(c, a, -(s * p)), z);
+            Vector256.Store(Vector256.FusedMultiplyAdd(c, b, -(s * q)), z + Lanes);
+            Vector256.Store(Vector256.FusedMultiplyAdd(c, d, -(s * r)), z + (2 * Lanes));
+            Vector256.Store(Vector256.FusedMultiplyAdd(c, e, -(s * t)), z + (3 * Lanes));
+            a = Vector256.FusedMultiplyAdd(c, p, s * a);
+            b = Vector256.FusedMultiplyAdd(c, q, s * b);
+            d = Vector256.FusedMultiplyAdd(c, r, s * d);
+            e = Vector256.FusedMultiplyAdd(c, t, s * e);
+        }
+
+        Vector256.Store(a, z);
+        Vector256.Store(b, z + Lanes);
+        Vector256.Store(d, z + (2 * Lanes));
+        Vector256.Store(e, z + (3 * Lanes));
+    }
+
+    [MethodImpl(MethodImplOptions.AggressiveOptimization)]
+    private static void Descend(double* z, double* rotations, int count)
+    {
+        z += count * StripWidth;
+        rotations += 2 * (count - 1);
+        Vector256<double> a = Vector256.Load(z), b = Vector256.Load(z + Lanes);
+        Vector256<double> d = Vector256.Load(z + (2 * Lanes)), e = Vector256.Load(z + (3 * Lanes));
+        for (int i = 0; i < count; i++, z -= StripWidth, rotations -= 2)
+        {
+            Vector256<double> c = Vector256.Create(rotations[0]), s = Vector256.Create(rotations[1]);
+            Vector256<double> p = Vector256.Load(z - StripWidth), q = Vector256.Load(z - StripWidth + Lanes);
+            Vector256<double> r = Vector256.Load(z - StripWidth + (2 * Lanes)), t = Vector256.Load(z - StripWidth + (3 * Lanes));
+            Vector256.Store(Vector256.FusedMultiplyAdd(c, a, s * p), z);
+            Vector256.Store(Vector256.FusedMultiplyAdd(c, b, s * q), z + Lanes);
+            Vector256.Store(Vector256.FusedMultiplyAdd(c, d, s * r), z + (2 * Lanes));
+            Vector256.Store(Vector256.FusedMultiplyAdd(c, e, s * t), z + (3 * Lanes));
+            a = Vector256.FusedMultiplyAdd(c, p, -(s * a));
+            b = Vector256.FusedMultiplyAdd(c, q, -(s * b));
+            d = Vector256.FusedMultiplyAdd(c, r, -(s * d));
+            e = Vector256.FusedMultiplyAdd(c, t, -(s * e));
+        }
+
+        Vector256.Store(a, z);
+        Vector256.Store(b, z + Lanes);
+        Vector256.Store(d, z + (2 * Lanes));
+        Vector256.Store(e, z + (3 * Lanes));
+    }
+}
