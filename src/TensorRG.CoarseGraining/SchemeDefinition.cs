@@ -18,6 +18,9 @@ public abstract class SchemeDefinition
     /// <summary>The time of a step grows as the bond dimension to this power.</summary>
     public abstract double CostExponent { get; }
 
+    /// <summary>How the error of ln Z follows from the discarded weights, calibrated on exactly solved models.</summary>
+    public abstract TruncationLaw TruncationLaw { get; }
+
     /// <summary>Creates the scheme for an element type.</summary>
     /// <typeparam name="T">Element type.</typeparam>
     /// <param name="algebra">Contractions and kernels.</param>

@@ -18,6 +18,9 @@ internal sealed class HigherOrderDefinition : SchemeDefinition
     public override double CostExponent => 7;
 
     /// <inheritdoc/>
+    public override TruncationLaw TruncationLaw => new(2, 2);
+
+    /// <inheritdoc/>
     public override IScheme<T> Create<T>(TensorAlgebra<T> algebra, SchemeSettings settings)
         => new HigherOrderScheme<T>(algebra, settings);
 }

@@ -18,6 +18,9 @@ internal sealed class BondWeightedDefinition : SchemeDefinition
     public override double CostExponent => 5;
 
     /// <inheritdoc/>
+    public override TruncationLaw TruncationLaw => new(1, 1.5);
+
+    /// <inheritdoc/>
     public override IScheme<T> Create<T>(TensorAlgebra<T> algebra, SchemeSettings settings)
     {
         ArgumentNullException.ThrowIfNull(settings);

@@ -18,6 +18,9 @@ internal sealed class LevinNaveDefinition : SchemeDefinition
     public override double CostExponent => 5;
 
     /// <inheritdoc/>
+    public override TruncationLaw TruncationLaw => new(1, 1);
+
+    /// <inheritdoc/>
     public override IScheme<T> Create<T>(TensorAlgebra<T> algebra, SchemeSettings settings)
         => new PlaquetteScheme<T>(algebra, settings, 0);
 }

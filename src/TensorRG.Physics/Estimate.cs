@@ -1,0 +1,12 @@
+using System.Collections.Immutable;
+
+namespace TensorRG.Physics;
+
+/// <summary>A number with its error bar and what the bar is made of.</summary>
+/// <param name="Value">The number.</param>
+/// <param name="Parts">Contributions to the bar, added up.</param>
+public sealed record Estimate(double Value, ImmutableArray<ErrorPart> Parts)
+{
+    /// <summary>The error bar: the sum of the parts.</summary>
+    public double Error => Parts.Sum(static p => p.Value);
+}
