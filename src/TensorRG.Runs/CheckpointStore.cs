@@ -5,6 +5,7 @@ namespace TensorRG.Runs;
 /// <summary>The checkpoints of one run: the newest two that are known to be good are kept.</summary>
 internal sealed class CheckpointStore
 {
+    private const int Generations = 2;
     private readonly IRunFiles _files;
     private readonly string _folder;
     private readonly string _identity;
@@ -56,9 +57,14 @@ internal sealed class CheckpointStore
     {
         byte[] bytes = CheckpointFile.Write(snapshot, _identity);
         _files.Replace(_folder, RunFiles.State(snapshot.Step), bytes);
-        int oldestKept = NewestGood ?? snapshot.Step;
         NewestGood = snapshot.Step;
-        foreach (int step in StepsDescending().Where(s => s < oldestKept))
+        DeleteOld();
+    }
+
+    /// <summary>Removes generations that a killed process did not come to remove.</summary>
+    public void DeleteOld()
+    {
+        foreach (int step in StepsDescending().Where(s => s <= NewestGood).Skip(Generations))
             _files.Delete(Path.Combine(_folder, RunFiles.State(step)));
     }
 

@@ -61,6 +61,7 @@ internal sealed class RunSession
         else if (timed.Count > 1)
             _notices.Add("There is no checkpoint although steps were done; they are computed again.");
         _store.SetAside(loaded);
+        _store.DeleteOld();
         _records.AddRange(loaded.Snapshot is null ? _flow.Records : _flow.Records.Select(r => WithTime(r, timed)));
         _options.Started?.Invoke(new RunStart(_flow.Step, [.. _records], _notices));
     }
