@@ -1,0 +1,57 @@
+using System.Collections.Immutable;
+using SkiaSharp;
+
+namespace TensorRG.Reports;
+
+/// <summary>
+/// The font of all figures: DejaVu Sans where installed, else the next of a few common ones, else whatever the machine
+/// has. Text needs it twice: to be drawn, and to be measured for the layout.
+/// </summary>
+internal sealed class PlotFont
+{
+    private static readonly string[] s_wanted = ["DejaVu Sans", "Noto Sans", "Liberation Sans", "Verdana", "Segoe UI", "Arial", "Helvetica"];
+    private static readonly Lazy<PlotFont> s_default = new(() => new PlotFont(SKFontManager.Default));
+
+    public PlotFont(SKFontManager fonts)
+    {
+        var installed = fonts.GetFontFamilies();
+        Family = s_wanted.FirstOrDefault(f => installed.Contains(f, StringComparer.OrdinalIgnoreCase)) ?? "";
+        Typeface = Family.Length > 0 ? fonts.MatchFamily(Family) : SKTypeface.Default;
+        if (Family.Length == 0) Family = Typeface.FamilyName;
+        CanDraw = Typeface.ContainsGlyphs("A0");
+        HasSpecialCharacters = Typeface.ContainsGlyphs(TickLabel.SpecialCharacters);
+        Notices = CanDraw ? [] : ["No font was found on this machine: the figures carry no text. Install one, such as DejaVu Sans (Debian package fonts-dejavu-core)."];
+    }
+
+    public static PlotFont Default => s_default.Value;
+
+    public string Family { get; }
+
+    public SKTypeface Typeface { get; }
+
+    /// <summary>Whether the font has letters at all; without fonts, text silently vanishes.</summary>
+    public bool CanDraw { get; }
+
+    /// <summary>Whether tick labels may use superscript digits.</summary>
+    public bool HasSpecialCharacters { get; }
+
+    public ImmutableArray<string> Notices { get; }
+
+    public float Width(string text, float size)
+    {
+        using var font = new SKFont(Typeface, size);
+        return font.MeasureText(text);
+    }
+
+    /// <summary>Breaks a text between words into lines no wider than given; a longer word stands alone.</summary>
+    public ImmutableArray<string> Wrap(string text, float size, float width)
+    {
+        var lines = new List<string>();
+        foreach (var word in text.Split(' ', StringSplitOptions.RemoveEmptyEntries))
+        {
+            if (lines.Count > 0 && Width(lines[^1] + " " + word, size) <= width) lines[^1] += " " + word;
+            else lines.Add(word);
+        }
+        return [.. lines];
+    }
+}

@@ -1,0 +1,32 @@
+using System.Globalization;
+using System.Xml.Linq;
+
+namespace TensorRG.Reports;
+
+/// <summary>
+/// Makes the drawing library's SVG fit for a web page: it scales (viewBox), says what it is (title, desc), names fallback
+/// fonts, and its ids carry the figure's own prefix, so that two figures in one page do not take each other's clip paths.
+/// </summary>
+internal static class SvgDocument
+{
+    private static readonly XNamespace s_svg = "http://www.w3.org/2000/svg";
+
+    public static string Finish(string svg, Figure figure)
+    {
+        var document = XDocument.Parse(svg, LoadOptions.PreserveWhitespace);
+        var root = document.Root!;
+        root.SetAttributeValue("viewBox", string.Create(CultureInfo.InvariantCulture, $"0 0 {figure.Width} {figure.Height}"));
+        root.SetAttributeValue("role", "img");
+        root.AddFirst(new XElement(s_svg + "title", figure.Title), new XElement(s_svg + "desc", figure.Caption));
+        foreach (var attribute in root.Descendants().Attributes()) Rewrite(attribute, figure.Id + "-");
+        return document.ToString(SaveOptions.DisableFormatting) + "\n";
+    }
+
+    private static void Rewrite(XAttribute attribute, string prefix)
+    {
+        if (attribute.Name == "id") attribute.Value = prefix + attribute.Value;
+        else if (attribute.Value.StartsWith("url(#", StringComparison.Ordinal)) attribute.Value = "url(#" + prefix + attribute.Value[5..];
+        else if (attribute.Name.LocalName == "href" && attribute.Value.StartsWith('#')) attribute.Value = "#" + prefix + attribute.Value[1..];
+        else if (attribute.Name == "font-family") attribute.Value += ", Verdana, sans-serif";
+    }
+}
