@@ -26,7 +26,7 @@ public static class ConvergencePlot
         var x = new PlotAxis("bond dimension χ", AxisScale.Logarithmic) { TickValues = [.. absolute.SelectMany(s => s.Points).Select(p => p.X)] };
         var panel = new PlotPanel(x, new PlotAxis(yLabel, AxisScale.Logarithmic), slope is null ? absolute : absolute.Add(slope))
         {
-            Guides = extrapolationError is { } error ? [new Guide("error bar of the extrapolated value", error)] : [],
+            Guides = extrapolationError is { } error ? [new Guide("error bar of the extrapolation", error)] : [],
         };
         return new Figure("convergence", title, caption, [panel]);
     }

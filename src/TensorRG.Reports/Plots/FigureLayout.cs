@@ -29,8 +29,9 @@ internal sealed class FigureLayout
         var width = figure.Width - 2 * Margin;
         TitleLines = font.Wrap(figure.Title, TitleSize, width);
         CaptionLines = font.Wrap(figure.Caption, CaptionSize, width);
-        var left = Margin + LabelSize + LabelGap + TickLength + 4 + panels.SelectMany(p => p.YTicks).Max(t => (float?)font.Width(t.Label, TickSize)) ?? 0;
-        var right = figure.Width - Margin - panels.Max(LastLabelOverhang);
+        var tickLabels = panels.SelectMany(p => p.YTicks).Select(t => font.Width(t.Label, TickSize)).DefaultIfEmpty().Max();
+        var left = MathF.Ceiling(Margin + LabelSize + LabelGap + TickLength + 4 + tickLabels);
+        var right = MathF.Floor(figure.Width - Margin - panels.Max(LastLabelOverhang));
         var legends = panels.Select(p => Legend(p, left, right)).ToList();
         var top = Margin + TitleLines.Length * TitleSize * LineSpacing + 6;
         var bottom = figure.Height - Margin - CaptionLines.Length * CaptionSize * LineSpacing;
@@ -40,8 +41,10 @@ internal sealed class FigureLayout
         foreach (var (panel, legend) in panels.Zip(legends))
         {
             var dataTop = top + HeightAbove(panel, legend);
-            areas.Add(new PanelArea(new PixelRect(left, right, dataTop + dataHeight, dataTop), legend, top));
-            top = dataTop + dataHeight + HeightBelow(panel);
+            var end = dataTop + dataHeight + HeightBelow(panel);
+            var data = new PixelRect(left, right, MathF.Round(dataTop + dataHeight), MathF.Round(dataTop));
+            areas.Add(new PanelArea(data, legend, MathF.Round(top), MathF.Round(end)));
+            top = end;
         }
         Areas = areas.DrainToImmutable();
         CaptionTop = bottom + 4;
@@ -62,7 +65,7 @@ internal sealed class FigureLayout
     private static float HeightAbove(PanelData panel, ImmutableArray<LegendEntry> legend)
     {
         var rows = legend.Length == 0 ? 0 : legend[^1].Row + 1;
-        var axis = panel.Panel.Top is null ? 0 : LabelSize + LabelGap + TickSize + TickLength + 4;
+        var axis = panel.Panel.Top is null ? 0 : LabelSize + LabelGap + TickSize * LineSpacing + TickLength;
         return rows * LegendSize * LineSpacing + axis + 10;
     }
 
@@ -97,6 +100,13 @@ internal sealed class FigureLayout
         }
         return entries.DrainToImmutable();
     }
+
+    public static float XLabelBaseline(PanelArea area) => area.Data.Bottom + TickLength + TickSize * LineSpacing + LabelSize;
+
+    public static float TopLabelBaseline(PanelArea area) => area.Data.Top - TickLength - TickSize * LineSpacing - LabelGap;
+
+    /// <summary>Baseline of the upright label, an x because the text runs upwards.</summary>
+    public static float YLabelBaseline => Margin + 0.8f * LabelSize;
 
     public static float LegendCentre(PanelArea area, LegendEntry entry) => area.Top + LegendSize * (0.5f + entry.Row * LineSpacing);
 }

@@ -48,12 +48,33 @@ public static class FigureRenderer
         for (var i = 0; i < panels.Length; i++)
         {
             PanelPainter.Paint(canvas, panels[i], layout.Areas[i], figure, font);
+            PaintLabels(canvas, panels[i], layout.Areas[i], font);
             PaintLegend(canvas, layout.Areas[i], font);
         }
         for (var i = 0; i < layout.TitleLines.Length; i++)
             PaintText(canvas, layout.TitleLines[i], FigureLayout.Margin, FigureLayout.TitleBaseline(i), FigureLayout.TitleSize, Palette.Text, font);
         for (var i = 0; i < layout.CaptionLines.Length; i++)
             PaintText(canvas, layout.CaptionLines[i], FigureLayout.Margin, layout.CaptionBaseline(i), FigureLayout.CaptionSize, Palette.FaintText, font);
+    }
+
+    private static void PaintLabels(SKCanvas canvas, PanelData panel, PanelArea area, PlotFont font)
+    {
+        var middle = (area.Data.Left + area.Data.Right) / 2;
+        PaintLabel(canvas, panel.XLabel, middle, FigureLayout.XLabelBaseline(area), area.Data.Width, font);
+        PaintLabel(canvas, panel.Panel.Top?.Label ?? "", middle, FigureLayout.TopLabelBaseline(area), area.Data.Width, font);
+        canvas.Save();
+        canvas.RotateDegrees(-90);
+        PaintLabel(canvas, panel.YLabel, -(area.Data.Top + area.Data.Bottom) / 2, FigureLayout.YLabelBaseline, area.Data.Height, font);
+        canvas.Restore();
+    }
+
+    /// <summary>A centred label, made smaller where it would be longer than its axis.</summary>
+    private static void PaintLabel(SKCanvas canvas, string text, float centre, float baseline, float room, PlotFont font)
+    {
+        if (text.Length == 0) return;
+        var width = font.Width(text, FigureLayout.LabelSize);
+        var shrink = Math.Min(1, room / width);
+        PaintText(canvas, text, centre - shrink * width / 2, baseline, shrink * FigureLayout.LabelSize, Palette.Text, font);
     }
 
     private static void PaintLegend(SKCanvas canvas, PanelArea area, PlotFont font)

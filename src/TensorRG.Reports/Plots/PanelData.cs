@@ -8,15 +8,17 @@ internal sealed class PanelData
     // A bar that reaches far below its point on a logarithmic axis must not squeeze the data: it is cut one decade down.
     private const double LongestBarInDecades = 1;
 
+    private const double FarInPanels = 50;
+
     public PanelData(PlotPanel panel, bool superscripts)
     {
         Panel = panel;
         Series = Resolve(panel);
-        XRange = Range(panel.X, Series.SelectMany(s => s.Points).Select(p => p.X), Crossings(panel, vertical: true));
+        XRange = Range(panel.X, panel.Series.SelectMany(s => s.Points).Select(p => PlotScale.Position(p.X, panel.X.Scale)), Crossings(panel, vertical: true));
         YRange = Range(panel.Y, Series.SelectMany(s => s.Points).SelectMany(BarEnds), Crossings(panel, vertical: false));
         (XTicks, XLabel) = TicksOf(panel.X, XRange, superscripts, intervals: 8);
         (YTicks, YLabel) = TicksOf(panel.Y, YRange, superscripts, intervals: 6);
-        Notices = [.. Series.Zip(panel.Series, LeftOut).OfType<string>(), .. panel.Guides.Select(LeftOut).OfType<string>()];
+        Notices = [.. panel.Series.Select(LeftOut).Append(Beyond()).Concat(panel.Guides.Select(LeftOut)).OfType<string>()];
     }
 
     public PlotPanel Panel { get; }
@@ -72,14 +74,21 @@ internal sealed class PanelData
 
     private static PlottedPoint? Plot(DataPoint point, PlotPanel panel)
     {
+        if (!CanBeShown(point, panel)) return null;
         var x = PlotScale.Position(point.X, panel.X.Scale);
         var y = PlotScale.Position(point.Y, panel.Y.Scale);
-        var isVisible = double.IsFinite(x) && double.IsFinite(y) && !(point.X > panel.X.Maximum) && !(point.Y > panel.Y.Maximum);
-        if (!isVisible) return null;
         if (!(point.Bar > 0 && double.IsFinite(point.Bar))) return new PlottedPoint(x, y, double.NaN, double.NaN);
         var low = PlotScale.Position(point.Y - point.Bar, panel.Y.Scale);
         return new PlottedPoint(x, y, double.IsNaN(low) ? double.NegativeInfinity : low, PlotScale.Position(point.Y + point.Bar, panel.Y.Scale));
     }
+
+    private static bool CanBeShown(DataPoint point, PlotPanel panel) =>
+        double.IsFinite(PlotScale.Position(point.X, panel.X.Scale)) && double.IsFinite(PlotScale.Position(point.Y, panel.Y.Scale));
+
+    private static bool IsBeyond(DataPoint point, PlotPanel panel) => point.X > panel.X.Maximum || point.Y > panel.Y.Maximum;
+
+    /// <summary>Keeps a line towards a point far beyond the frame within what pixel coordinates can hold.</summary>
+    public double NearFrame(double y) => Math.Clamp(y, YRange.Low - FarInPanels * YRange.Length, YRange.High + FarInPanels * YRange.Length);
 
     private IEnumerable<double> BarEnds(PlottedPoint point)
     {
@@ -98,7 +107,8 @@ internal sealed class PanelData
     private static AxisRange Range(PlotAxis axis, IEnumerable<double> data, IEnumerable<double> guides)
     {
         var included = axis.Include is { } value ? PlotScale.Position(value, axis.Scale) : double.NaN;
-        return AxisRange.Around(data.Concat(guides).Append(included), axis.Scale);
+        var end = axis.Maximum is { } maximum ? PlotScale.Position(maximum, axis.Scale) : double.PositiveInfinity;
+        return AxisRange.Around(data.Concat(guides).Append(included).Where(double.IsFinite).Select(p => Math.Min(p, end)), axis.Scale);
     }
 
     private static (ImmutableArray<AxisTick> Ticks, string Label) TicksOf(PlotAxis axis, AxisRange range, bool superscripts, int intervals)
@@ -107,16 +117,22 @@ internal sealed class PanelData
         if (axis.Scale == AxisScale.Logarithmic) return (Ticks.Logarithmic(range, superscripts), axis.Label);
         if (axis.IsWhole) return (Ticks.Whole(range, intervals + 2), axis.Label);
         var power = Ticks.CommonPower(range);
-        var label = power == 0 ? axis.Label : $"{axis.Label} (in units of {TickLabel.Decade(power, superscripts)})";
+        var label = power == 0 ? axis.Label : $"{axis.Label} [×{TickLabel.Decade(power, superscripts)}]";
         return (Ticks.Linear(range, intervals, power), label);
     }
 
-    private static string? LeftOut(PlottedSeries plotted, DataSeries series)
+    private string? LeftOut(DataSeries series)
     {
-        var missing = series.Points.Length - plotted.Points.Count();
+        var missing = series.Points.Count(p => !CanBeShown(p, Panel));
         if (missing == 0) return null;
-        var name = series.Name.Length > 0 ? $"'{series.Name}'" : "the unnamed series";
-        return $"{missing} of {series.Points.Length} points of {name} left out of the figure: not finite, not positive on a logarithmic axis, or beyond the axis maximum.";
+        var name = series.Name.Length > 0 ? $"'{series.Name}'" : $"'{Panel.Y.Label}'";
+        return $"{missing} of {series.Points.Length} points of {name} left out of the figure: not finite, or not positive on a logarithmic axis.";
+    }
+
+    private string? Beyond()
+    {
+        var points = Panel.Series.SelectMany(s => s.Points).Count(p => CanBeShown(p, Panel) && IsBeyond(p, Panel));
+        return points == 0 ? null : $"{points} points of '{Panel.Y.Label}' lie beyond the end of the axis.";
     }
 
     private string? LeftOut(Guide guide) =>

@@ -9,18 +9,18 @@ namespace TensorRG.Reports;
 /// </summary>
 internal sealed class PlotFont
 {
-    private static readonly string[] s_wanted = ["DejaVu Sans", "Noto Sans", "Liberation Sans", "Verdana", "Segoe UI", "Arial", "Helvetica"];
-    private static readonly Lazy<PlotFont> s_default = new(() => new PlotFont(SKFontManager.Default));
+    private const string NoFont =
+        "No font was found on this machine: the figures carry no text. Install one, such as DejaVu Sans (Debian package fonts-dejavu-core).";
 
-    public PlotFont(SKFontManager fonts)
+    private static readonly string[] s_wanted = ["DejaVu Sans", "Noto Sans", "Liberation Sans", "Verdana", "Segoe UI", "Arial", "Helvetica"];
+    private static readonly Lazy<PlotFont> s_default = new(() => new PlotFont(Choose(SKFontManager.Default)));
+
+    public PlotFont(SKTypeface typeface)
     {
-        var installed = fonts.GetFontFamilies();
-        Family = s_wanted.FirstOrDefault(f => installed.Contains(f, StringComparer.OrdinalIgnoreCase)) ?? "";
-        Typeface = Family.Length > 0 ? fonts.MatchFamily(Family) : SKTypeface.Default;
-        if (Family.Length == 0) Family = Typeface.FamilyName;
-        CanDraw = Typeface.ContainsGlyphs("A0");
-        HasSpecialCharacters = Typeface.ContainsGlyphs(TickLabel.SpecialCharacters);
-        Notices = CanDraw ? [] : ["No font was found on this machine: the figures carry no text. Install one, such as DejaVu Sans (Debian package fonts-dejavu-core)."];
+        Typeface = typeface;
+        Family = typeface.FamilyName;
+        HasSpecialCharacters = typeface.ContainsGlyphs(TickLabel.SpecialCharacters);
+        Notices = typeface.ContainsGlyphs("A0") ? [] : [NoFont];
     }
 
     public static PlotFont Default => s_default.Value;
@@ -29,12 +29,10 @@ internal sealed class PlotFont
 
     public SKTypeface Typeface { get; }
 
-    /// <summary>Whether the font has letters at all; without fonts, text silently vanishes.</summary>
-    public bool CanDraw { get; }
-
     /// <summary>Whether tick labels may use superscript digits.</summary>
     public bool HasSpecialCharacters { get; }
 
+    /// <summary>A notice where the font has no letters: on a machine without fonts, text silently vanishes.</summary>
     public ImmutableArray<string> Notices { get; }
 
     public float Width(string text, float size)
@@ -53,5 +51,12 @@ internal sealed class PlotFont
             else lines.Add(word);
         }
         return [.. lines];
+    }
+
+    private static SKTypeface Choose(SKFontManager fonts)
+    {
+        var installed = fonts.GetFontFamilies();
+        var family = s_wanted.FirstOrDefault(f => installed.Contains(f, StringComparer.OrdinalIgnoreCase));
+        return family is null ? SKTypeface.Default : fonts.MatchFamily(family);
     }
 }

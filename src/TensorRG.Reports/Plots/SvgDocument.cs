@@ -18,9 +18,14 @@ internal static class SvgDocument
         root.SetAttributeValue("viewBox", string.Create(CultureInfo.InvariantCulture, $"0 0 {figure.Width} {figure.Height}"));
         root.SetAttributeValue("role", "img");
         root.AddFirst(new XElement(s_svg + "title", figure.Title), new XElement(s_svg + "desc", figure.Caption));
+        root.Descendants(s_svg + "rect").Where(IsClearing).ToList().ForEach(r => r.Remove());
         foreach (var attribute in root.Descendants().Attributes()) Rewrite(attribute, figure.Id + "-");
-        return document.ToString(SaveOptions.DisableFormatting) + "\n";
+        return root.ToString(SaveOptions.DisableFormatting) + "\n";
     }
+
+    // Clearing to transparent comes out as a rectangle without a fill, which SVG viewers paint black.
+    private static bool IsClearing(XElement rectangle) =>
+        rectangle.Attribute("fill") is null && rectangle.Parent!.Name != s_svg + "clipPath";
 
     private static void Rewrite(XAttribute attribute, string prefix)
     {

@@ -16,9 +16,11 @@ internal static class TickLabel
     public static string Multiple(int digit, int power, bool superscripts)
     {
         if (power is >= -3 and <= 3) return NumberFormat.Fixed(digit * Math.Pow(10, power), Math.Max(0, -power));
-        var number = digit.ToString(CultureInfo.InvariantCulture);
-        return superscripts ? $"{number}×10{Superscript(power)}" : $"{number}e{Exponent(power)}";
+        return Times(digit.ToString(CultureInfo.InvariantCulture), power, superscripts);
     }
+
+    public static string Times(string mantissa, int power, bool superscripts) =>
+        superscripts ? $"{mantissa}×10{Superscript(power)}" : $"{mantissa}e{Exponent(power)}";
 
     public static string Fixed(double value, int powerOfTen, int decimals) =>
         NumberFormat.Fixed(powerOfTen == 0 ? value : value / Math.Pow(10, powerOfTen), decimals);

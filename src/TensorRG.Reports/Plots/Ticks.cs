@@ -10,17 +10,18 @@ public static class Ticks
 {
     private const int MostDecadeLabels = 9;
     private const int MostMinorDecades = 16;
+    private const double ShortestInDecades = 0.6;
 
-    /// <summary>Decade ticks for a logarithmic axis, with minor ticks; where no two decades fit in, 2 and 5 are labelled too, and on less than a third of a decade round values.</summary>
+    /// <summary>Decade ticks for a logarithmic axis, with minor ticks; where no two decades fit in, 2 and 5 are labelled too, and on less than 0.6 of a decade round values.</summary>
     /// <param name="range">Range in decimal logarithms.</param>
     /// <param name="superscripts">Whether 10⁻⁸ may be written with superscript digits; 1e-08 otherwise.</param>
     public static ImmutableArray<AxisTick> Logarithmic(AxisRange range, bool superscripts = true)
     {
-        if (range.Length < 1.0 / 3) return WithinADecade(range);
+        if (range.Length < ShortestInDecades) return WithinADecade(range, superscripts);
         var first = (int)Math.Floor(range.Low);
         var last = (int)Math.Ceiling(range.High);
         var inside = Enumerable.Range(first, last - first + 1).Count(d => range.Contains(d));
-        var every = (int)Math.Ceiling(inside / (double)MostDecadeLabels);
+        var every = Math.Max(1, (int)Math.Ceiling(inside / (double)MostDecadeLabels));
         var ticks = new List<AxisTick>();
         for (var decade = first; decade <= last; decade++)
         {
@@ -79,20 +80,20 @@ public static class Ticks
         return largest is >= 1e-3 and < 1e6 ? 0 : (int)Math.Floor(Math.Log10(largest));
     }
 
-    private static ImmutableArray<AxisTick> WithinADecade(AxisRange range)
+    private static ImmutableArray<AxisTick> WithinADecade(AxisRange range, bool superscripts)
     {
         var values = new AxisRange(Math.Pow(10, range.Low), Math.Pow(10, range.High));
         var power = (int)Math.Floor(range.Low);
-        var suffix = power is >= -3 and < 5 ? "" : "e" + TickLabel.Exponent(power);
-        var linear = Linear(values, 4, suffix.Length == 0 ? 0 : power);
-        return [.. linear.Where(t => t.Position > 0).Select(t => new AxisTick(Math.Log10(t.Position), t.Label + suffix, true))];
+        var isPlain = power is >= -3 and < 5;
+        var linear = Linear(values, 4, isPlain ? 0 : power).Where(t => t.Position > 0);
+        return [.. linear.Select(t => new AxisTick(Math.Log10(t.Position), isPlain ? t.Label : TickLabel.Times(t.Label, power, superscripts), true))];
     }
 
     private static IEnumerable<AxisTick> Minor(int decade, bool labelFew, bool superscripts)
     {
         for (var digit = 2; digit <= 9; digit++)
         {
-            var label = labelFew && digit is 2 or 5 && labelFew ? TickLabel.Multiple(digit, decade, superscripts) : "";
+            var label = labelFew && (digit is 2 or 5) ? TickLabel.Multiple(digit, decade, superscripts) : "";
             yield return new AxisTick(decade + Math.Log10(digit), label, label.Length > 0);
         }
     }
@@ -101,7 +102,7 @@ public static class Ticks
     {
         var power = Math.Pow(10, Math.Floor(Math.Log10(rough)));
         var mantissa = rough / power;
-        return power * (mantissa <= 1 ? 1 : mantissa <= 2 ? 2 : mantissa <= 5 ? 5 : 10);
+        return power * (mantissa < 1.5 ? 1 : mantissa < 3.5 ? 2 : mantissa < 7.5 ? 5 : 10);
     }
 
     private static int Modulo(int value, int divisor) => ((value % divisor) + divisor) % divisor;
