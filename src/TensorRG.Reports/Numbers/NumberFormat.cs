@@ -23,6 +23,7 @@ public static class NumberFormat
     /// <remarks>
     /// Error 0 gives the shortest round-trip digits and (0); an unknown error (NaN) gives (?), an infinite one (inf).
     /// No more than the 17 digits a double can hold are printed; an error below the last of them is rounded up.
+    /// Exact ties round to the even digit, as .NET does.
     /// </remarks>
     /// <param name="value">The value, any double.</param>
     /// <param name="error">Half length of the error bar, in the same unit; not negative.</param>
@@ -70,7 +71,7 @@ public static class NumberFormat
 
     /// <summary>
     /// A count that may be huge: plain below 1e6 (1024), a power of two as such above (2^40), otherwise two significant
-    /// digits (1.1e12). A count that is not an integer gets two significant digits as well.
+    /// digits (1.1e12). Averages of counts, which need not be integers, keep up to six digits below 1e6 (2.5).
     /// </summary>
     /// <param name="count">Any double.</param>
     public static string Count(double count)
@@ -79,6 +80,7 @@ public static class NumberFormat
         var isInteger = Math.Abs(count % 1) == 0;
         if (isInteger && Math.Abs(count) < LargestPlainCount) return Fixed(count, 0);
         if (count > 1 && BitConverter.DoubleToInt64Bits(count) << 12 == 0) return "2^" + Math.ILogB(count).ToString(CultureInfo.InvariantCulture);
+        if (Math.Abs(count) is >= 1e-4 and < LargestPlainCount) return count.ToString("G6", CultureInfo.InvariantCulture);
         return Scientific(count);
     }
 

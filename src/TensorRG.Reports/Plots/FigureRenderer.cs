@@ -105,7 +105,7 @@ public static class FigureRenderer
 
     private static void PaintText(SKCanvas canvas, string text, float left, float baseline, float size, Color color, PlotFont font)
     {
-        using var skFont = new SKFont(font.Typeface, size);
+        using var skFont = font.At(size);
         using var paint = new SKPaint { Color = color.ToSKColor(), IsAntialias = true };
         canvas.DrawText(text, left, baseline, SKTextAlign.Left, skFont, paint);
     }

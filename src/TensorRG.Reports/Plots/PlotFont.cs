@@ -16,11 +16,16 @@ internal sealed class PlotFont
     private static readonly Lazy<PlotFont> s_default = new(() => new PlotFont(Choose(SKFontManager.Default)));
 
     public PlotFont(SKTypeface typeface)
+        : this(typeface, typeface.ContainsGlyphs)
+    {
+    }
+
+    internal PlotFont(SKTypeface typeface, Func<string, bool> containsGlyphs)
     {
         Typeface = typeface;
         Family = typeface.FamilyName;
-        HasSpecialCharacters = typeface.ContainsGlyphs(TickLabel.SpecialCharacters);
-        Notices = typeface.ContainsGlyphs("A0") ? [] : [NoFont];
+        HasSpecialCharacters = containsGlyphs(TickLabel.SpecialCharacters);
+        Notices = containsGlyphs("A0") ? [] : [NoFont];
     }
 
     public static PlotFont Default => s_default.Value;
@@ -35,9 +40,12 @@ internal sealed class PlotFont
     /// <summary>A notice where the font has no letters: on a machine without fonts, text silently vanishes.</summary>
     public ImmutableArray<string> Notices { get; }
 
+    /// <summary>The font at a size, with unrounded advances: what is measured at one size holds at another.</summary>
+    public SKFont At(float size) => new(Typeface, size) { Subpixel = true, LinearMetrics = true, Hinting = SKFontHinting.None };
+
     public float Width(string text, float size)
     {
-        using var font = new SKFont(Typeface, size);
+        using var font = At(size);
         return font.MeasureText(text);
     }
 

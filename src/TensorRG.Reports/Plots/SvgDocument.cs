@@ -19,7 +19,8 @@ internal static class SvgDocument
         root.SetAttributeValue("role", "img");
         root.AddFirst(new XElement(s_svg + "title", figure.Title), new XElement(s_svg + "desc", figure.Caption));
         root.Descendants(s_svg + "rect").Where(IsClearing).ToList().ForEach(r => r.Remove());
-        foreach (var attribute in root.Descendants().Attributes()) Rewrite(attribute, figure.Id + "-");
+        var names = NewNames(root, figure.Id);
+        foreach (var attribute in root.Descendants().Attributes()) Rewrite(attribute, names);
         return root.ToString(SaveOptions.DisableFormatting) + "\n";
     }
 
@@ -27,11 +28,16 @@ internal static class SvgDocument
     private static bool IsClearing(XElement rectangle) =>
         rectangle.Attribute("fill") is null && rectangle.Parent!.Name != s_svg + "clipPath";
 
-    private static void Rewrite(XAttribute attribute, string prefix)
+    // The library numbers clip paths through the life of the process; counting them anew makes the bytes repeatable.
+    private static Dictionary<string, string> NewNames(XElement root, string prefix) =>
+        root.Descendants().Attributes("id").Select((id, i) => (id.Value, Name: string.Create(CultureInfo.InvariantCulture, $"{prefix}-{i + 1}")))
+            .ToDictionary(p => p.Value, p => p.Name, StringComparer.Ordinal);
+
+    private static void Rewrite(XAttribute attribute, Dictionary<string, string> names)
     {
-        if (attribute.Name == "id") attribute.Value = prefix + attribute.Value;
-        else if (attribute.Value.StartsWith("url(#", StringComparison.Ordinal)) attribute.Value = "url(#" + prefix + attribute.Value[5..];
-        else if (attribute.Name.LocalName == "href" && attribute.Value.StartsWith('#')) attribute.Value = "#" + prefix + attribute.Value[1..];
+        if (attribute.Name == "id") attribute.Value = names[attribute.Value];
+        else if (attribute.Value.StartsWith("url(#", StringComparison.Ordinal)) attribute.Value = $"url(#{names[attribute.Value[5..^1]]})";
+        else if (attribute.Name.LocalName == "href" && attribute.Value.StartsWith('#')) attribute.Value = "#" + names[attribute.Value[1..]];
         else if (attribute.Name == "font-family") attribute.Value += ", Verdana, sans-serif";
     }
 }
