@@ -4,19 +4,26 @@ using TensorRG.Tensors.Kernels.Decompositions;
 namespace TensorRG.Tensors.Kernels;
 
 /// <summary>
-/// The default kernels: SIMD code of our own, no native library, and the same bits on any number of threads.
+/// The default kernels: SIMD code of our own, no native library, and the same bits on any number of threads and on every
+/// instruction path. An object may be used from one thread at a time or from many; calls that find the workers busy run
+/// on their caller.
 /// </summary>
 /// <typeparam name="T"><see cref="double"/> or <see cref="Complex"/>.</typeparam>
-public sealed class ManagedKernels<T> : IKernels<T>
+/// <param name="workers">Threads for large problems; shared, not owned.</param>
+/// <param name="path">Instruction path of the matrix product.</param>
+public sealed class ManagedKernels<T>(Workers workers, SimdPath path) : IKernels<T>
     where T : unmanaged, INumberBase<T>
 {
-    private readonly PlainKernels<T> _shim = new();
+    /// <summary>Threads for large problems.</summary>
+    internal Workers Workers { get; } = workers;
 
     /// <inheritdoc/>
     public void Multiply(MatrixView<T> a, MatrixView<T> b, MatrixView<T> c, bool accumulate)
-        => _shim.Multiply(a, b, c, accumulate);
+        => Gemm.Multiply(a, b, c, accumulate, Workers, path);
 
     /// <inheritdoc/>
+    /// <exception cref="ArgumentException">A has fewer rows than columns.</exception>
+    /// <exception cref="DecompositionException">A holds a NaN or infinity.</exception>
     public void OrthogonalFactor(MatrixView<T> a, MatrixView<T> r) => ThinQr.Factor(this, a, r);
 
     /// <inheritdoc/>

@@ -12,7 +12,7 @@ internal sealed unsafe class BidiagonalReduction<T> : IDisposable
 {
     private const int Block = 32;
 
-    private readonly IKernels<T> _kernels;
+    private readonly ManagedKernels<T> _kernels;
     private readonly MatrixView<T> _a;
     private readonly int _n;
     private readonly AlignedBuffer<T> _buffer;
@@ -28,7 +28,7 @@ internal sealed unsafe class BidiagonalReduction<T> : IDisposable
     /// <summary>Prepares the reduction of A, which <see cref="Reduce"/> destroys.</summary>
     /// <param name="kernels">Matrix products.</param>
     /// <param name="a">n x n with unit row stride.</param>
-    public BidiagonalReduction(IKernels<T> kernels, MatrixView<T> a)
+    public BidiagonalReduction(ManagedKernels<T> kernels, MatrixView<T> a)
     {
         _kernels = kernels;
         _a = a;
@@ -93,7 +93,7 @@ internal sealed unsafe class BidiagonalReduction<T> : IDisposable
         Panels.AdjointTimes(column + _a.ColumnStride, _a.ColumnStride, length, after, v, y);
         ProjectOut(At(_v, j, first), length, v, At(_y, j + 1, 0), after, done, y);
         ProjectOut(At(_x, j, 0), length, v, At(_u, j + 1, first), after, done, y);
-        ColumnOps.Scale(_leftTau[j], y, after);
+        VectorOps.Scale(_leftTau[j], y, after);
         return beta;
     }
 
@@ -116,7 +116,7 @@ internal sealed unsafe class BidiagonalReduction<T> : IDisposable
         Panels.AddTimes(At(_a, j + 1, j + 1), _a.ColumnStride, after, after, u, x);
         ProjectOut(At(_y, j + 1, 0), after, u, At(_v, j + 1, first), after, done + 1, x);
         ProjectOut(At(_u, j + 1, first), after, u, At(_x, j + 1, 0), after, done, x);
-        ColumnOps.Scale(_rightTau[j], x, after);
+        VectorOps.Scale(_rightTau[j], x, after);
         return beta;
     }
 
@@ -129,8 +129,8 @@ internal sealed unsafe class BidiagonalReduction<T> : IDisposable
         MatrixView<T> y = _y.Slice(top, 0, rest, width), x = _x.Slice(top, 0, rest, width);
         for (int p = 0; p < width; p++)
         {
-            ColumnOps.Scale(-T.One, At(y, 0, p), rest);
-            ColumnOps.Scale(-T.One, At(x, 0, p), rest);
+            VectorOps.Scale(-T.One, At(y, 0, p), rest);
+            VectorOps.Scale(-T.One, At(x, 0, p), rest);
         }
 
         _kernels.Multiply(_v.Slice(top, first, rest, width), y.Adjoint, trailing, true);
@@ -150,7 +150,7 @@ internal sealed unsafe class BidiagonalReduction<T> : IDisposable
     private void ProjectOut(T* left, int leftRows, T* vector, T* right, int rightRows, int columns, T* target)
     {
         Panels.AdjointTimes(left, _n, leftRows, columns, vector, _small);
-        ColumnOps.Scale(-T.One, _small, columns);
+        VectorOps.Scale(-T.One, _small, columns);
         Panels.AddTimes(right, _n, rightRows, columns, _small, target);
     }
 }

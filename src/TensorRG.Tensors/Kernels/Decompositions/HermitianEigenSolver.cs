@@ -6,7 +6,7 @@ namespace TensorRG.Tensors.Kernels.Decompositions;
 internal static unsafe class HermitianEigenSolver
 {
     /// <summary>A V = V diag(values), descending; A is left unchanged.</summary>
-    public static void Solve<T>(IKernels<T> kernels, MatrixView<T> a, Span<double> values, MatrixView<T> vectors)
+    public static void Solve<T>(ManagedKernels<T> kernels, MatrixView<T> a, Span<double> values, MatrixView<T> vectors)
         where T : unmanaged, INumberBase<T>
     {
         int n = a.Rows;

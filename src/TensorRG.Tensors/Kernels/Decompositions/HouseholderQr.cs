@@ -13,7 +13,7 @@ internal static unsafe class HouseholderQr
     /// <summary>
     /// Overwrites A (m x n, m >= n, unit row stride) with Q and writes R with a real non-negative diagonal.
     /// </summary>
-    public static void Factor<T>(IKernels<T> kernels, MatrixView<T> a, MatrixView<T> r)
+    public static void Factor<T>(ManagedKernels<T> kernels, MatrixView<T> a, MatrixView<T> r)
         where T : unmanaged, INumberBase<T>
     {
         int n = a.Columns;
@@ -63,7 +63,7 @@ internal static unsafe class HouseholderQr
     }
 
     /// <summary>C := Q C, Q the product of all reflectors in the columns of V.</summary>
-    public static void ApplyQ<T>(IKernels<T> kernels, MatrixView<T> v, T* tau, MatrixView<T> c)
+    public static void ApplyQ<T>(ManagedKernels<T> kernels, MatrixView<T> v, T* tau, MatrixView<T> c)
         where T : unmanaged, INumberBase<T>
     {
         int n = v.Columns;
@@ -97,7 +97,7 @@ internal static unsafe class HouseholderQr
         double largest = -1;
         for (int j = from; j < a.Columns; j++)
         {
-            double norm = ColumnOps.NormSquared(&a.Data[from + (j * a.ColumnStride)], a.Rows - from);
+            double norm = VectorOps.SumOfSquares(&a.Data[from + (j * a.ColumnStride)], a.Rows - from);
             if (norm > largest)
                 (best, largest) = (j, norm);
         }
@@ -105,7 +105,8 @@ internal static unsafe class HouseholderQr
         return best;
     }
 
-    private static void TakeR<T>(MatrixView<T> a, MatrixView<T> r)
+    /// <summary>R := the upper triangle of A.</summary>
+    public static void TakeR<T>(MatrixView<T> a, MatrixView<T> r)
         where T : unmanaged, INumberBase<T>
     {
         for (int i = 0; i < r.Rows; i++)
@@ -115,7 +116,8 @@ internal static unsafe class HouseholderQr
         }
     }
 
-    private static void MakeDiagonalPositive<T>(MatrixView<T> q, MatrixView<T> r)
+    /// <summary>Flips the sign of columns of Q and rows of R until the real diagonal of R is non-negative.</summary>
+    public static void MakeDiagonalPositive<T>(MatrixView<T> q, MatrixView<T> r)
         where T : unmanaged, INumberBase<T>
     {
         for (int i = 0; i < r.Rows; i++)
@@ -124,7 +126,7 @@ internal static unsafe class HouseholderQr
                 continue;
             for (int j = i; j < r.Columns; j++)
                 r[i, j] = -r[i, j];
-            ColumnOps.Scale(-T.One, &q.Data[i * q.ColumnStride], q.Rows);
+            VectorOps.Scale(-T.One, &q.Data[i * q.ColumnStride], q.Rows);
         }
     }
 }

@@ -13,7 +13,7 @@ internal static unsafe class JacobiSvd
     /// <summary>
     /// A = U diag(s) V^H for a square A with largest element near one; A is destroyed. All views have unit row stride.
     /// </summary>
-    public static void Solve<T>(IKernels<T> kernels, MatrixView<T> a, MatrixView<T> u, Span<double> s, MatrixView<T> v)
+    public static void Solve<T>(ManagedKernels<T> kernels, MatrixView<T> a, MatrixView<T> u, Span<double> s, MatrixView<T> v)
         where T : unmanaged, INumberBase<T>
     {
         int n = a.Rows;
@@ -52,7 +52,7 @@ internal static unsafe class JacobiSvd
         {
             bool rotated = false;
             for (int p = 0; p < n; p++)
-                norms.Data[p] = ColumnOps.NormSquared(x.Data + (p * x.ColumnStride), n);
+                norms.Data[p] = VectorOps.SumOfSquares(x.Data + (p * x.ColumnStride), n);
             for (int p = 0; p < n; p++)
             {
                 for (int q = p + 1; q < n; q++)
@@ -73,19 +73,19 @@ internal static unsafe class JacobiSvd
         if (alpha < Entry.TinySquare || beta < Entry.TinySquare)
             return false;
         T* left = x.Data + (p * x.ColumnStride), right = x.Data + (q * x.ColumnStride);
-        T gamma = ColumnOps.Dot(left, right, n);
+        T gamma = VectorOps.Dot(left, right, n);
         double size = Scalar.Magnitude(gamma);
         if (size <= tolerance * Math.Sqrt(alpha) * Math.Sqrt(beta))
             return false;
         double zeta = (beta - alpha) / (2 * size);
         double t = Math.CopySign(1, zeta) / (Math.Abs(zeta) + Math.Sqrt(1 + (zeta * zeta)));
         double c = 1 / Math.Sqrt(1 + (t * t));
-        ColumnOps.Rotate(left, right, x.Rows, c, gamma * Scalar.FromReal<T>(c * t / size));
+        ColumnRotation.Apply(left, right, x.Rows, c, gamma * Scalar.FromReal<T>(c * t / size));
         if (Math.Abs(t) * size > 0.1 * Math.Min(alpha, beta))
         {
             // The short update cancels here: measure again.
-            norms[p] = ColumnOps.NormSquared(left, n);
-            norms[q] = ColumnOps.NormSquared(right, n);
+            norms[p] = VectorOps.SumOfSquares(left, n);
+            norms[q] = VectorOps.SumOfSquares(right, n);
         }
         else
         {
@@ -104,7 +104,7 @@ internal static unsafe class JacobiSvd
         double[] norms = new double[n];
         for (int k = 0; k < n; k++)
         {
-            double square = ColumnOps.NormSquared(x.Data + (k * x.ColumnStride), n);
+            double square = VectorOps.SumOfSquares(x.Data + (k * x.ColumnStride), n);
             norms[k] = square < Entry.TinySquare ? 0 : Math.Sqrt(square);
             rank += norms[k] > 0 ? 1 : 0;
         }

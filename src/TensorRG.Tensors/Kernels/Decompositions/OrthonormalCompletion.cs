@@ -35,10 +35,10 @@ internal static unsafe class OrthonormalCompletion
         where T : unmanaged, INumberBase<T>
     {
         Panels.AdjointTimes(q.Data, q.ColumnStride, q.Rows, j, column, overlaps);
-        ColumnOps.Scale(-T.One, overlaps, j);
+        VectorOps.Scale(-T.One, overlaps, j);
         Panels.AddTimes(q.Data, q.ColumnStride, q.Rows, j, overlaps, column);
-        double norm = Math.Sqrt(ColumnOps.NormSquared(column, q.Rows));
-        ColumnOps.Scale(Scalar.FromReal<T>(1 / norm), column, q.Rows);
+        double norm = Math.Sqrt(VectorOps.SumOfSquares(column, q.Rows));
+        VectorOps.Scale(Scalar.FromReal<T>(1 / norm), column, q.Rows);
     }
 
     private static void AddCover<T>(MatrixView<T> q, int j, double[] cover)

@@ -21,7 +21,7 @@ internal static unsafe class Panels
         }
 
         for (; j < columns; j++)
-            y[j] = ColumnOps.Dot(a + (j * ld), x, rows);
+            y[j] = VectorOps.Dot(a + (j * ld), x, rows);
     }
 
     /// <summary>y += sum over j of x[j] column_j.</summary>
@@ -36,7 +36,7 @@ internal static unsafe class Panels
         }
 
         for (; j < columns; j++)
-            ColumnOps.Axpy(x[j], a + (j * ld), y, rows);
+            VectorOps.AddScaled(x[j], a + (j * ld), y, rows);
     }
 
     /// <summary>y += A x for a Hermitian A of which the lower triangle is stored.</summary>
@@ -53,8 +53,8 @@ internal static unsafe class Panels
         for (; j < n; j++)
         {
             T* column = a + j + (j * ld);
-            y[j] += (Scalar.FromReal<T>(Scalar.RealPart(column[0])) * x[j]) + ColumnOps.Dot(column + 1, x + j + 1, n - j - 1);
-            ColumnOps.Axpy(x[j], column + 1, y + j + 1, n - j - 1);
+            y[j] += (Scalar.FromReal<T>(Scalar.RealPart(column[0])) * x[j]) + VectorOps.Dot(column + 1, x + j + 1, n - j - 1);
+            VectorOps.AddScaled(x[j], column + 1, y + j + 1, n - j - 1);
         }
     }
 

@@ -21,7 +21,7 @@ internal static unsafe class Reflector
         T alpha = x[0];
         double real = Scalar.RealPart(alpha);
         double imaginary = Scalar.ToComplex(alpha).Imaginary;
-        double tail = ColumnOps.NormSquared(x + 1, n - 1);
+        double tail = VectorOps.SumOfSquares(x + 1, n - 1);
         x[0] = T.One;
         if (tail <= Entry.TinySquare)
         {
@@ -33,7 +33,7 @@ internal static unsafe class Reflector
 
         double beta = -Math.CopySign(Math.Sqrt((real * real) + (imaginary * imaginary) + tail), real);
         tau = (Scalar.FromReal<T>(beta) - alpha) / Scalar.FromReal<T>(beta);
-        ColumnOps.Scale(T.One / (alpha - Scalar.FromReal<T>(beta)), x + 1, n - 1);
+        VectorOps.Scale(T.One / (alpha - Scalar.FromReal<T>(beta)), x + 1, n - 1);
         return beta;
     }
 
@@ -44,12 +44,12 @@ internal static unsafe class Reflector
         for (int j = 0; j < columns; j++)
         {
             T* column = c + (j * ld);
-            ColumnOps.Axpy(-(factor * ColumnOps.Dot(v, column, rows)), v, column, rows);
+            VectorOps.AddScaled(-(factor * VectorOps.Dot(v, column, rows)), v, column, rows);
         }
     }
 
     /// <summary>C := H_0 ... H_(k-1) C, or its adjoint (H_0 ... H_(k-1))^H C, by three matrix products.</summary>
-    public static void ApplyBlock<T>(IKernels<T> kernels, MatrixView<T> v, T* tau, MatrixView<T> c, bool adjoint)
+    public static void ApplyBlock<T>(ManagedKernels<T> kernels, MatrixView<T> v, T* tau, MatrixView<T> c, bool adjoint)
         where T : unmanaged, INumberBase<T>
     {
         int k = v.Columns;
@@ -66,7 +66,7 @@ internal static unsafe class Reflector
         kernels.Multiply(v, weighted, c, true);
     }
 
-    private static void FormNegativeT<T>(IKernels<T> kernels, MatrixView<T> v, T* tau, MatrixView<T> t, MatrixView<T> gram)
+    private static void FormNegativeT<T>(ManagedKernels<T> kernels, MatrixView<T> v, T* tau, MatrixView<T> t, MatrixView<T> gram)
         where T : unmanaged, INumberBase<T>
     {
         kernels.Multiply(v.Adjoint, v, gram, false);

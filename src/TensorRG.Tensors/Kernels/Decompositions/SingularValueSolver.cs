@@ -12,7 +12,7 @@ internal static unsafe class SingularValueSolver
     private const int LargestJacobi = 100;
 
     /// <summary>A = U diag(s) V^H; A is left unchanged.</summary>
-    public static void Solve<T>(IKernels<T> kernels, MatrixView<T> a, MatrixView<T> u, Span<double> s, MatrixView<T> v)
+    public static void Solve<T>(ManagedKernels<T> kernels, MatrixView<T> a, MatrixView<T> u, Span<double> s, MatrixView<T> v)
         where T : unmanaged, INumberBase<T>
     {
         if (a.Rows < a.Columns)
@@ -45,7 +45,7 @@ internal static unsafe class SingularValueSolver
             s[i] = Math.ScaleB(s[i], exponent);
     }
 
-    private static void SolveSquare<T>(IKernels<T> kernels, MatrixView<T> a, MatrixView<T> u, Span<double> s, MatrixView<T> v)
+    private static void SolveSquare<T>(ManagedKernels<T> kernels, MatrixView<T> a, MatrixView<T> u, Span<double> s, MatrixView<T> v)
         where T : unmanaged, INumberBase<T>
     {
         if (a.Rows <= LargestJacobi)
@@ -55,7 +55,7 @@ internal static unsafe class SingularValueSolver
     }
 
     /// <summary>Bidiagonalisation, implicit QR, back-transformation.</summary>
-    internal static void SolveByBidiagonal<T>(IKernels<T> kernels, MatrixView<T> a, MatrixView<T> u, Span<double> s, MatrixView<T> v)
+    internal static void SolveByBidiagonal<T>(ManagedKernels<T> kernels, MatrixView<T> a, MatrixView<T> u, Span<double> s, MatrixView<T> v)
         where T : unmanaged, INumberBase<T>
     {
         int n = a.Rows;

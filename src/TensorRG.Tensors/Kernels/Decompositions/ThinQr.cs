@@ -19,7 +19,7 @@ internal static unsafe class ThinQr
     private const double LargestDefect = 0.05;
 
     /// <summary>A (m x n, m >= n) := Q, with R upper triangular, diagonal real and non-negative.</summary>
-    public static void Factor<T>(IKernels<T> kernels, MatrixView<T> a, MatrixView<T> r)
+    public static void Factor<T>(ManagedKernels<T> kernels, MatrixView<T> a, MatrixView<T> r)
         where T : unmanaged, INumberBase<T>
     {
         int m = a.Rows, n = a.Columns;
@@ -65,7 +65,7 @@ internal static unsafe class ThinQr
         }
     }
 
-    private static bool TryCholeskyTwice<T>(IKernels<T> kernels, MatrixView<T> w, MatrixView<T> r, T* small)
+    private static bool TryCholeskyTwice<T>(ManagedKernels<T> kernels, MatrixView<T> w, MatrixView<T> r, T* small)
         where T : unmanaged, INumberBase<T>
     {
         int n = w.Columns;
@@ -95,14 +95,14 @@ internal static unsafe class ThinQr
             for (int k = 0; k < j; k++)
             {
                 T* above = g.Data + (k * g.RowStride);
-                ColumnOps.Axpy(-Scalar.Conjugate(above[j]), above + j, row + j, n - j);
+                VectorOps.AddScaled(-Scalar.Conjugate(above[j]), above + j, row + j, n - j);
             }
 
             double pivot = Scalar.RealPart(row[j]);
             if (!(pivot > SmallestPivot * before) || !double.IsFinite(pivot))
                 return false;
             new Span<T>(row, j).Clear();
-            ColumnOps.Scale(Scalar.FromReal<T>(1 / Math.Sqrt(pivot)), row + j, n - j);
+            VectorOps.Scale(Scalar.FromReal<T>(1 / Math.Sqrt(pivot)), row + j, n - j);
             row[j] = Scalar.FromReal<T>(Math.Sqrt(pivot));
         }
 
@@ -123,7 +123,7 @@ internal static unsafe class ThinQr
     }
 
     /// <summary>W := W R^-1 by substitution: backward stable row by row, which a product with R^-1 is not.</summary>
-    private static void SolveRight<T>(IKernels<T> kernels, MatrixView<T> w, MatrixView<T> r)
+    private static void SolveRight<T>(ManagedKernels<T> kernels, MatrixView<T> w, MatrixView<T> r)
         where T : unmanaged, INumberBase<T>
     {
         int m = w.Rows, n = w.Columns;
@@ -154,8 +154,8 @@ internal static unsafe class ThinQr
         {
             T* column = w.Data + (j * w.ColumnStride);
             for (int k = first; k < j; k++)
-                ColumnOps.Axpy(-r[k, j], w.Data + (k * w.ColumnStride), column, w.Rows);
-            ColumnOps.Scale(T.One / r[j, j], column, w.Rows);
+                VectorOps.AddScaled(-r[k, j], w.Data + (k * w.ColumnStride), column, w.Rows);
+            VectorOps.Scale(T.One / r[j, j], column, w.Rows);
         }
     }
 }

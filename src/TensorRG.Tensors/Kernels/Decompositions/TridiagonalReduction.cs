@@ -13,7 +13,7 @@ internal sealed unsafe class TridiagonalReduction<T> : IDisposable
     private const int Block = 32;
     private const int UpdateWidth = 128;
 
-    private readonly IKernels<T> _kernels;
+    private readonly ManagedKernels<T> _kernels;
     private readonly MatrixView<T> _a;
     private readonly int _n;
     private readonly AlignedBuffer<T> _reflectors;
@@ -27,7 +27,7 @@ internal sealed unsafe class TridiagonalReduction<T> : IDisposable
     /// <summary>Prepares the reduction of A, which <see cref="Reduce"/> destroys.</summary>
     /// <param name="kernels">Matrix products.</param>
     /// <param name="a">n x n with unit row stride; only the lower triangle is read.</param>
-    public TridiagonalReduction(IKernels<T> kernels, MatrixView<T> a)
+    public TridiagonalReduction(ManagedKernels<T> kernels, MatrixView<T> a)
     {
         _kernels = kernels;
         _a = a;
@@ -117,13 +117,13 @@ internal sealed unsafe class TridiagonalReduction<T> : IDisposable
         Panels.HermitianTimes(&_a.Data[top + (top * _a.ColumnStride)], _a.ColumnStride, length, v, w);
         Panels.AdjointTimes(oldW, _w.ColumnStride, length, done, v, _small);
         Panels.AdjointTimes(oldV, _v.ColumnStride, length, done, v, _small + Block);
-        ColumnOps.Scale(-T.One, _small, done);
-        ColumnOps.Scale(-T.One, _small + Block, done);
+        VectorOps.Scale(-T.One, _small, done);
+        VectorOps.Scale(-T.One, _small + Block, done);
         Panels.AddTimes(oldV, _v.ColumnStride, length, done, _small, w);
         Panels.AddTimes(oldW, _w.ColumnStride, length, done, _small + Block, w);
-        ColumnOps.Scale(_tau[j], w, length);
-        T half = -_tau[j] * ColumnOps.Dot(w, v, length) * Scalar.FromReal<T>(0.5);
-        ColumnOps.Axpy(half, v, w, length);
+        VectorOps.Scale(_tau[j], w, length);
+        T half = -_tau[j] * VectorOps.Dot(w, v, length) * Scalar.FromReal<T>(0.5);
+        VectorOps.AddScaled(half, v, w, length);
     }
 
     /// <summary>A -= V W^H + W V^H on the lower triangle behind the panel, as [V W] [-W -V]^H by blocks of columns.</summary>
