@@ -1,3 +1,4 @@
+using System.Globalization;
 using MathNet.Numerics.LinearAlgebra;
 
 namespace TensorRG.Models.Tests;
@@ -87,6 +88,18 @@ public class ExactTests
     {
         Near.Check(ReferenceValues.Get("ice-square"), Exact(Quantity.LogZPerSite, Set("six-vertex")), 1e-15, "ice");
         Near.Check(ReferenceValues.Get("f-model-tc"), Exact(Quantity.LogZPerSite, Weights(0.5, 0.5, 1)), 1e-15, "F model");
+    }
+
+    // data/six-vertex-independent.csv, made by data/six-vertex-independent.py in 50-digit arithmetic: all phases, next to
+    // their boundaries too.
+    [Fact]
+    public void Six_vertex_agrees_with_an_independent_evaluation()
+    {
+        foreach (string line in File.ReadLines(ReferenceValues.PathOf("six-vertex-independent.csv")).Skip(1))
+        {
+            double[] v = [.. line.Split(',').Select(x => double.Parse(x, CultureInfo.InvariantCulture))];
+            Near.Check(v[3], Exact(Quantity.LogZPerSite, Weights(v[0], v[1], v[2])), 2e-15, line);
+        }
     }
 
     // The row-to-row transfer matrix of L = 6, 8, 10 columns, half of them occupied, diagonalised. Critical: the finite-size

@@ -127,6 +127,37 @@ public class NetworkTests
         }
     }
 
+    // A[0,k,0,k] = lambda_k / lambda_0 -> (K/2)^k / k! as K -> 0 (leading term of the Bessel function I_k): tiny, positive,
+    // and not lost in the rounding of lambda_0.
+    [Fact]
+    public void Hot_clock_weights_keep_their_relative_accuracy()
+    {
+        VertexNetwork network = Network("clock", ("q", 12), ("T", 1e6));
+        double expected = 1;
+        for (int k = 1; k <= 5; k++)
+        {
+            expected *= 0.5e-6 / k;
+            Near.Scaled(expected, network.RealElement(0, k, 0, k), expected, 1e-11, $"k = {k}");
+            Near.Scaled(expected, network.RealElement(0, 12 - k, 0, 12 - k), expected, 1e-11, $"k = {12 - k}");
+        }
+    }
+
+    // The Bessel sum and the plain sum over angles meet at |K| = q^2.
+    [Theory]
+    [InlineData(3, 9)]
+    [InlineData(6, 36)]
+    [InlineData(6, -36)]
+    [InlineData(20, 400)]
+    [InlineData(5, -1)]
+    public void The_two_ways_to_the_clock_weights_agree_where_they_meet(int q, double k)
+    {
+        VertexNetwork below = Network("clock", ("q", q), ("T", 1), ("J", k * (1 - 1e-15)));
+        VertexNetwork above = Network("clock", ("q", q), ("T", 1), ("J", k * (1 + 1e-15)));
+        Near.Check(below.LogPrefactor, above.LogPrefactor, 4e-15, "ln lambda_0");
+        for (int n = 0; n < q; n++)
+            Near.Check(below.RealElement(0, n, 0, n), above.RealElement(0, n, 0, n), 4e-15, $"lambda_{n}");
+    }
+
     [Fact]
     public void Complex_elements_cannot_be_read_as_real_ones()
     {
