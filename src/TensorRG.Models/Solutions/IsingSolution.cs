@@ -48,7 +48,7 @@ public sealed class IsingSolution
     /// <param name="temperature">T > 0.</param>
     /// <param name="jx">Horizontal coupling, any sign.</param>
     /// <param name="jy">Vertical coupling, any sign.</param>
-    /// <exception cref="ArgumentOutOfRangeException">T is not a positive number or a coupling is not finite.</exception>
+    /// <exception cref="ArgumentOutOfRangeException">T is not a positive number, or a coupling is not a number or above 1e300 T.</exception>
     public static IsingSolution At(double temperature, double jx, double jy)
     {
         Check(temperature, jx, jy);
@@ -77,7 +77,7 @@ public sealed class IsingSolution
     public ExactValue? Exact(Quantity quantity) => quantity switch
     {
         Quantity.LogZPerSite => Value(LogZPerSite, 1, "integral over one momentum, by double-exponential quadrature"),
-        Quantity.EnergyPerSite => Value(EnergyPerSite, temperature, "integral of the derivative of the integrand"),
+        Quantity.EnergyPerSite => Value(EnergyPerSite, temperature * couplings.Sum, "integral of the derivative of the integrand"),
         Quantity.SpecificHeatPerSite when double.IsFinite(SpecificHeatPerSite) =>
             Value(SpecificHeatPerSite, 1, "integral of the second derivative of the integrand"),
         Quantity.SpontaneousMagnetisation => Magnetisation(),
@@ -125,7 +125,7 @@ public sealed class IsingSolution
     {
         if (!(temperature > 0 && double.IsFinite(temperature)))
             throw new ArgumentOutOfRangeException(nameof(temperature), "The temperature must be a positive number.");
-        if (!(double.IsFinite(jx) && double.IsFinite(jy)))
-            throw new ArgumentOutOfRangeException(nameof(jx), "The couplings must be finite numbers.");
+        if (!(Math.Abs(jx) / temperature <= 1e300 && Math.Abs(jy) / temperature <= 1e300))
+            throw new ArgumentOutOfRangeException(nameof(jx), "The couplings must be finite numbers, at most 1e300 temperatures.");
     }
 }
