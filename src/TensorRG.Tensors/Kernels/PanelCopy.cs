@@ -44,8 +44,43 @@ internal static unsafe class PanelCopy
             nint j = 0;
             for (; j <= columns - 4; j += 4)
                 V.Load(source + j).Store(target + j);
-            for (; j < columns; j++)
-                target[j] = source[j];
+            if (j < columns)
+                LaneTail.Store(LaneTail.Load(source + j, columns - j), target + j, columns - j);
+        }
+    }
+
+    /// <summary>The same, with zeros after the columns up to <paramref name="targetRow"/>.</summary>
+    internal static void RunPadded<T>(T* source, nint row, nint column, nint rows, nint columns, T* target, nint targetRow)
+        where T : unmanaged
+    {
+        nint width = targetRow * Reals<T>(), used = columns * Reals<T>();
+        if (column == 1 && width % 4 == 0)
+        {
+            PadRows((double*)source, row * Reals<T>(), rows, used, (double*)target, width);
+            return;
+        }
+
+        System.Runtime.InteropServices.NativeMemory.Clear(target, (nuint)(rows * targetRow * sizeof(T)));
+        Run(source, row, column, rows, columns, target, targetRow);
+    }
+
+    [MethodImpl(MethodImplOptions.AggressiveOptimization)]
+    private static void PadRows(double* source, nint row, nint rows, nint columns, double* target, nint targetRow)
+    {
+        nint whole = columns & ~3, rest = columns & 3;
+        for (; rows > 0; rows--, source += row, target += targetRow)
+        {
+            nint j = 0;
+            for (; j < whole; j += 4)
+                V.Load(source + j).Store(target + j);
+            if (rest != 0)
+            {
+                LaneTail.Load(source + j, rest).Store(target + j);
+                j += 4;
+            }
+
+            for (; j < targetRow; j += 4)
+                V.Store(default, target + j);
         }
     }
 
