@@ -1,1 +1,1 @@
-return 0;
+return TensorRG.Cli.Application.Run(args);

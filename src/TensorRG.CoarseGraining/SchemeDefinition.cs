@@ -18,6 +18,9 @@ public abstract class SchemeDefinition
     /// <summary>The time of a step grows as the bond dimension to this power.</summary>
     public abstract double CostExponent { get; }
 
+    /// <summary>Whether the scheme reads <see cref="SchemeSettings.BondExponent"/>.</summary>
+    public virtual bool UsesBondExponent => false;
+
     /// <summary>How the error of ln Z follows from the discarded weights, calibrated on exactly solved models.</summary>
     public abstract TruncationLaw TruncationLaw { get; }
 

@@ -9,4 +9,9 @@ public sealed record Estimate(double Value, ImmutableArray<ErrorPart> Parts)
 {
     /// <summary>The error bar: the sum of the parts.</summary>
     public double Error => Parts.Sum(static p => p.Value);
+
+    /// <summary>The number and its bar multiplied by an exact factor.</summary>
+    /// <param name="factor">Any number.</param>
+    public Estimate Times(double factor)
+        => new(Value * factor, [.. Parts.Select(p => p with { Value = p.Value * Math.Abs(factor) })]);
 }

@@ -15,6 +15,9 @@ internal sealed class BondWeightedDefinition : SchemeDefinition
     public override string Source => "D. Adachi, T. Okubo, S. Todo, Phys. Rev. B 105, L060402 (2022)";
 
     /// <inheritdoc/>
+    public override bool UsesBondExponent => true;
+
+    /// <inheritdoc/>
     public override double CostExponent => 5;
 
     /// <inheritdoc/>

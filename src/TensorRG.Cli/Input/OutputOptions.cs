@@ -1,0 +1,25 @@
+using System.CommandLine;
+using TensorRG.Cli.Output;
+
+namespace TensorRG.Cli.Input;
+
+/// <summary>The options that choose how much is printed.</summary>
+internal static class OutputOptions
+{
+    public static (Option<bool> Json, Option<bool> Quiet) Create() => (
+        new Option<bool>("--json") { Description = "Print one JSON object and nothing else." },
+        new Option<bool>("--quiet", "-q") { Description = "Print the summary alone, without the table of steps." });
+
+    /// <exception cref="UsageException">Both are given.</exception>
+    public static OutputMode Read(ParseResult result, Option<bool> json, Option<bool> quiet)
+    {
+        if (result.GetValue(json) && result.GetValue(quiet))
+            throw new UsageException("--json and --quiet contradict each other: --json prints the object alone. Give one of them.");
+        if (result.GetValue(json))
+            return OutputMode.Json;
+        return result.GetValue(quiet) ? OutputMode.Quiet : OutputMode.Full;
+    }
+
+    public static IStepDisplay Display(OutputMode mode)
+        => mode == OutputMode.Full ? new LiveDisplay(Consoles.Out) : new SilentDisplay(Consoles.Error);
+}
