@@ -142,6 +142,19 @@ public class NetworkTests
         }
     }
 
+    // A cold antiferromagnet of odd q chooses between two equally good angles: lambda_k / lambda_0 -> cos(pi k (q - 1) / q).
+    [Theory]
+    [InlineData(3)]
+    [InlineData(7)]
+    [InlineData(11)]
+    [InlineData(19)]
+    public void Cold_clock_weights_keep_equal_angles_equal(int q)
+    {
+        VertexNetwork network = Network("clock", ("q", q), ("T", 1e-9), ("J", -1e6));
+        for (int k = 0; k < q; k++)
+            Near.Check(Math.Cos(Math.PI * k * (q - 1) / q), network.RealElement(0, k, 0, k), 1e-13, $"k = {k}");
+    }
+
     // The Bessel sum and the plain sum over angles meet at |K| = q^2.
     [Theory]
     [InlineData(3, 9)]
