@@ -45,9 +45,8 @@ internal sealed class PlaquetteScheme<T>(TensorAlgebra<T> algebra, SchemeSetting
         if (FormsTensor(state))
         {
             using Tensor<T> tensor = Whole(state);
-            using Tensor<T> turned = tensor.Permute(1, 2, 3, 0);
-            first = Decompose(tensor, step, 0);
-            second = Decompose(turned, step, 1);
+            first = Decompose(tensor, [0, 1], [2, 3], step, 0);
+            second = Decompose(tensor, [1, 2], [3, 0], step, 1);
         }
         else
         {
@@ -115,11 +114,11 @@ internal sealed class PlaquetteScheme<T>(TensorAlgebra<T> algebra, SchemeSetting
         return _subspace.Compute(ring, settings.Cut, new RandomSequence(settings.Seed, step, index), Expected(ring));
     }
 
-    private TruncatedSvd<T> Decompose(Tensor<T> tensor, int step, int index)
+    private TruncatedSvd<T> Decompose(Tensor<T> tensor, ReadOnlySpan<int> rows, ReadOnlySpan<int> columns, int step, int index)
     {
         if (settings.Decomposition == DecompositionMode.Full)
-            return DenseSvd.Compute(algebra.Kernels, tensor, [0, 1], [2, 3], settings.Cut);
-        using var map = new TensorMap<T>(algebra, tensor);
+            return DenseSvd.Compute(algebra.Kernels, tensor, rows, columns, settings.Cut);
+        using var map = new TensorMap<T>(algebra.Kernels, tensor, rows, columns);
         return _subspace.Compute(map, settings.Cut, new RandomSequence(settings.Seed, step, index), Expected(map));
     }
 
