@@ -109,11 +109,14 @@ public class CrashTests
         return stored == Sample.Steps ? Sample.Steps - 1 : stored;
     }
 
+    /// <summary>Returns the step that was resumed from, after checking that the times up to it were not lost.</summary>
     private static int Complete(MemoryFiles files)
     {
-        int from = Sample.Steps;
-        Sample.Run(Open(files), new RunOptions { Checkpoints = Sample.EveryStep, Started = s => from = s.Step });
-        return from;
+        RunStart? start = null;
+        Sample.Run(Open(files), new RunOptions { Checkpoints = Sample.EveryStep, Started = s => start = s });
+        Assert.All(start?.Records ?? [], r => Assert.True(double.IsFinite(r.Seconds)));
+        Assert.Empty(start?.Notices ?? []);
+        return start?.Step ?? Sample.Steps;
     }
 
     /// <summary>Two generations, no half-written files.</summary>
