@@ -4,6 +4,7 @@ namespace TensorRG.Runs.Tests;
 public class CrashTests
 {
     private const string Folder = "/runs/a";
+    private const int MostDeaths = 1000;
     private readonly string _expected = Uninterrupted();
 
     [Theory]
@@ -46,6 +47,7 @@ public class CrashTests
                 if (files.Points < files.DieAt)
                     break;
                 deaths++;
+                Assert.True(deaths < MostDeaths, $"Seed {seed}: the run does not get on.");
                 files = files.Survivor(kind, random.Next(1, 60));
             }
 
