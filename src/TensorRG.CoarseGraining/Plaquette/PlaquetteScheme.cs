@@ -89,12 +89,7 @@ internal sealed class PlaquetteScheme<T>(TensorAlgebra<T> algebra, SchemeSetting
     public double AspectRatio(int step) => 1;
 
     private bool FormsTensor(NetworkState<T> state)
-        => state.Tensors.ContainsKey(Site) || settings.Decomposition switch
-        {
-            DecompositionMode.Full => true,
-            DecompositionMode.Iterative => false,
-            _ => PlaquetteCost.PrefersTensor(state[NorthWest], state[NorthEast], settings.Cut.MaxDimension),
-        };
+        => state.Tensors.ContainsKey(Site) || settings.Decomposition == DecompositionMode.Full;
 
     /// <summary>T[l, u, r, d].</summary>
     private Tensor<T> Whole(NetworkState<T> state)
@@ -110,8 +105,16 @@ internal sealed class PlaquetteScheme<T>(TensorAlgebra<T> algebra, SchemeSetting
 
     private TruncatedSvd<T> Decompose(NetworkState<T> state, ReadOnlySpan<string> names, int step, int index)
     {
-        using RingMap<T> ring = Ring(state, names);
-        return _subspace.Compute(ring, settings.Cut, new RandomSequence(settings.Seed, step, index), Expected(ring));
+        Tensor<T> a = state[names[0]], b = state[names[1]], c = state[names[2]], d = state[names[3]];
+        var random = new RandomSequence(settings.Seed, step, index);
+        if (settings.Decomposition == DecompositionMode.Iterative || !PairSize.Fits(a, b, c, d))
+        {
+            using var ring = new RingMap<T>(algebra, a, b, c, d);
+            return _subspace.Compute(ring, settings.Cut, random, Expected(ring));
+        }
+
+        using var pairs = new RingPairs<T>(algebra, a, b, c, d);
+        return _subspace.Compute(pairs.Map, settings.Cut, random, Expected(pairs.Map));
     }
 
     private TruncatedSvd<T> Decompose(Tensor<T> tensor, ReadOnlySpan<int> rows, ReadOnlySpan<int> columns, int step, int index)
