@@ -32,7 +32,7 @@ internal sealed unsafe class RotationBatch : IDisposable
         _rotations = new double[Math.Max(2 * size, Math.Min(64 * size, 1 << 16))];
     }
 
-    /// <summary>Row i, of which the first <c>size</c> elements count. Valid after <see cref="Flush"/>.</summary>
+    /// <summary>Row i, of which the first <c>size</c> elements count. Valid after <see cref="Finish"/>.</summary>
     public double* Row(int i) => _rows.Data + ((nint)i * _columns);
 
     /// <summary>
@@ -50,8 +50,17 @@ internal sealed unsafe class RotationBatch : IDisposable
         return _rotations.AsSpan(_used - (2 * count), 2 * count);
     }
 
-    /// <summary>Applies all sweeps collected so far.</summary>
-    public void Flush()
+    /// <summary>
+    /// Applies what is left and normalises the rows: thousands of rotations stretch a unit vector by as many roundings.
+    /// </summary>
+    public void Finish()
+    {
+        Flush();
+        for (int i = 0; i < _size; i++)
+            VectorOps.ScaleReal(1 / Math.Sqrt(VectorOps.SumOfSquares(Row(i), _size)), Row(i), _size);
+    }
+
+    private void Flush()
     {
         if (_sweeps.Count == 0)
             return;

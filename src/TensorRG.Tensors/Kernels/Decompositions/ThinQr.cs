@@ -42,7 +42,9 @@ internal static unsafe class ThinQr
         Unscale(r, scales.Data);
     }
 
-    private static void Load<T>(MatrixView<T> a, MatrixView<T> w, int* scales)
+    /// <summary>W := A with every column scaled by the power of two, 2^-scales[j], that brings its largest part near one.</summary>
+    /// <exception cref="DecompositionException">A holds a NaN or infinity.</exception>
+    public static void Load<T>(MatrixView<T> a, MatrixView<T> w, int* scales)
         where T : unmanaged, INumberBase<T>
     {
         Entry.CopyScaled(a, w, 0);
@@ -55,7 +57,8 @@ internal static unsafe class ThinQr
         }
     }
 
-    private static void Unscale<T>(MatrixView<T> r, int* scales)
+    /// <summary>Undoes <see cref="Load"/> on R.</summary>
+    public static void Unscale<T>(MatrixView<T> r, int* scales)
         where T : unmanaged, INumberBase<T>
     {
         for (int j = 0; j < r.Columns; j++)

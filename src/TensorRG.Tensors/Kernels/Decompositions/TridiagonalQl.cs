@@ -8,6 +8,9 @@ internal static class TridiagonalQl
 {
     private const int MaxSweepsEach = 60;
 
+    /// <summary>Sweeps on one eigenvalue after which the deflation floor doubles.</summary>
+    private const int Patience = 6;
+
     /// <summary>
     /// Overwrites the diagonal d (n) with the eigenvalues, unordered, and destroys the off-diagonal e (n; e[n-1] unused).
     /// Row k of the batch becomes eigenvector k. The matrix should have its largest element near one.
@@ -21,8 +24,10 @@ internal static class TridiagonalQl
         {
             for (int sweep = 0; ; sweep++)
             {
+                // Equal eigenvalues to round-off may stay above half an ulp: there e is the rounding of the sweeps.
+                double negligible = Math.ScaleB(floor, sweep / Patience);
                 int high = low;
-                while (high < n - 1 && Math.Abs(e[high]) > floor)
+                while (high < n - 1 && Math.Abs(e[high]) > negligible)
                     high++;
                 if (high == low)
                     break;
@@ -32,7 +37,7 @@ internal static class TridiagonalQl
             }
         }
 
-        batch.Flush();
+        batch.Finish();
     }
 
     /// <summary>Half an ulp of the norm; a lower floor need not be reached in finite precision.</summary>
