@@ -77,12 +77,13 @@ public static unsafe class Gemm
         }
     }
 
-    /// <summary>Cuts C into strips along its longer side; each strip is a product of its own, so the bits do not change.</summary>
+    /// <summary>Cuts C into strips of rows, or of columns where it is wide; each strip is a product of its own, so the bits do not change.</summary>
     private static void Share<T>(
         MatrixView<T> a, MatrixView<T> b, MatrixView<T> c, bool accumulate, Workers workers, SimdPath path)
         where T : unmanaged, INumberBase<T>
     {
-        bool byColumns = c.Columns >= c.Rows;
+        // Packing A twice costs more than packing B twice, so rows are cut first.
+        bool byColumns = c.Columns > 2L * c.Rows;
         int length = byColumns ? c.Columns : c.Rows;
         int strip = StripLength(length, sizeof(T) / sizeof(double), workers.Threads);
         workers.Run((length + strip - 1) / strip, part =>

@@ -10,6 +10,7 @@ namespace TensorRG.Tensors.Kernels;
 /// </summary>
 /// <typeparam name="T"><see cref="double"/> or <see cref="Complex"/>.</typeparam>
 /// <typeparam name="TKernel">The micro-kernel.</typeparam>
+[SkipLocalsInit]
 internal unsafe struct GemmDriver<T, TKernel>
     where T : unmanaged, INumberBase<T>
     where TKernel : struct, IMicroKernel
@@ -20,11 +21,15 @@ internal unsafe struct GemmDriver<T, TKernel>
     private const int RowBlock = 126;
     private const int ColumnBlock = 576;
 
+    // Real numbers in a first-level cache, and columns beyond which a row-major A is packed.
+    private const int SmallSize = 4096;
+    private const int ManyColumns = 288;
+
     private readonly GemmScratch _scratch;
     private readonly MatrixView<T> _c;
     private readonly bool _wide;
     private TileCall _call;
-    private TileEnd _end;
+    private readonly TileEnd _end;
     private bool _packA;
     private bool _packB;
 
@@ -76,23 +81,35 @@ internal unsafe struct GemmDriver<T, TKernel>
 
     private void Slab(in MatrixView<T> a, in MatrixView<T> b, bool accumulate)
     {
-        long sizeA = (long)a.Rows * a.Columns * Reals, sizeB = (long)b.Rows * b.Columns * Reals;
-        _packA = a.ColumnStride != 1 && sizeA > 4096 && b.Columns > 2 * TileColumns;
-        _packB = !_wide && (b.ColumnStride != 1 || (sizeB > 4096 && a.Rows > 4 * TileRows));
-        _packB |= b.ColumnStride != 1;
+        _packA = PacksA(a, b.Columns);
+        _packB = b.ColumnStride != 1 || PacksB(b, a.Rows);
         nint row = a.RowStride * Reals;
-        _call = new TileCall(
-            a.Columns,
-            _packA ? 2 : row * 2 / Reals,
-            _packA || Reals == 2 ? 1 : row,
-            _packA ? TKernel.Rows : a.ColumnStride * Reals,
-            _packB ? TKernel.Lanes * TKernel.Vectors : b.RowStride * Reals,
-            _c.RowStride,
-            accumulate);
+        _call.Depth = a.Columns;
+        _call.APair = _packA ? 2 : row * 2 / Reals;
+        _call.AOdd = _packA || Reals == 2 ? 1 : row;
+        _call.AStep = _packA ? TKernel.Rows : a.ColumnStride * Reals;
+        _call.CRow = _c.RowStride;
+        _call.Accumulate = accumulate;
         int step = ColumnBlock / Reals / TileColumns * TileColumns;
         for (int j = 0; j < b.Columns; j += step)
             Columns(a, b, j, Math.Min(step, b.Columns - j));
     }
+
+    /// <summary>
+    /// In place is faster while A is small or meets few columns. Beyond that a strided A wastes cache lines, and a long
+    /// row-major one competes with itself for the same cache sets (measured: 10 % at 1024^3).
+    /// </summary>
+    private static bool PacksA(in MatrixView<T> a, int columns)
+    {
+        long size = (long)a.Rows * a.Columns * Reals;
+        if (size <= SmallSize)
+            return false;
+        return a.ColumnStride == 1 ? columns * Reals > ManyColumns : columns > 2 * TileColumns;
+    }
+
+    /// <summary>A copy of B pays once it is read by several tiles of rows and is too large for the first-level cache.</summary>
+    private bool PacksB(in MatrixView<T> b, int rows)
+        => !_wide && (long)b.Rows * b.Columns * Reals > SmallSize && rows > 4 * TileRows;
 
     /// <summary>One block of columns of B and C, times all row blocks of A.</summary>
     private void Columns(in MatrixView<T> a, in MatrixView<T> b, int firstColumn, int columns)
@@ -119,26 +136,28 @@ internal unsafe struct GemmDriver<T, TKernel>
         return (double*)packed;
     }
 
-    /// <summary>Columns of B side by side, padded with zeros to the width of a tile.</summary>
+    /// <summary>Columns of B side by side, padded with zeros to whole vectors.</summary>
     private static void PackPanel(in MatrixView<T> b, int firstColumn, int columns, T* target)
     {
-        if (columns < TileColumns)
-            System.Runtime.InteropServices.NativeMemory.Clear(target, (nuint)(TileColumns * b.Rows * sizeof(T)));
         T* source = b.Data + (firstColumn * b.ColumnStride);
-        PanelCopy.Run(source, b.RowStride, b.ColumnStride, b.Rows, columns, target, TileColumns);
+        if (columns == TileColumns)
+            PanelCopy.Run(source, b.RowStride, b.ColumnStride, b.Rows, columns, target, TileColumns);
+        else
+            PanelCopy.RunPadded(source, b.RowStride, b.ColumnStride, b.Rows, columns, target, TileColumns);
     }
 
     private double* PackA(in MatrixView<T> a, int firstRow, int rows)
     {
         nint panel = (nint)TileRows * a.Columns;
-        int tiles = (rows + TileRows - 1) / TileRows;
-        T* packed = (T*)_scratch.Left(panel * tiles * Reals);
+        var tiles = new RowTiles(rows, TileRows);
+        T* packed = (T*)_scratch.Left(panel * tiles.Count * Reals);
         T* target = packed;
-        for (int tile = 0; tile < tiles; tile++, target += panel)
+        T* source = a.Data + (firstRow * a.RowStride);
+        for (int tile = 0; tile < tiles.Count; tile++, target += panel)
         {
-            Split(rows, tiles, tile, out int start, out int size);
-            T* source = a.Data + ((firstRow + start) * a.RowStride);
+            int size = tile < tiles.Larger ? tiles.Size + 1 : tiles.Size;
             PanelCopy.Run(source, a.ColumnStride, a.RowStride, a.Columns, size, target, TileRows);
+            source += size * a.RowStride;
         }
 
         return (double*)packed;
@@ -148,14 +167,16 @@ internal unsafe struct GemmDriver<T, TKernel>
     private void Block(
         in MatrixView<T> a, in MatrixView<T> b, double* packedA, double* packedB, int i, int rows, int firstColumn, int columns)
     {
+        var tiles = new RowTiles(rows, TileRows);
         int width = _wide && packedB is null ? TKernel.Lanes * TKernel.WideVectors / Reals : TileColumns;
         double* left = packedA is null ? (double*)(a.Data + (i * a.RowStride)) : packedA;
-        nint leftStep = (packedA is null ? a.RowStride : a.Columns) * Reals;
-        TileCall call = _call;
+        nint leftStep = (packedA is null ? a.RowStride : 0) * Reals, leftTile = packedA is null ? 0 : (nint)TKernel.Rows * a.Columns;
+        T* c = _c.Data + (i * _c.RowStride) + (firstColumn * _c.ColumnStride);
         for (int j = 0; j < columns; j += width)
         {
             width = columns - j < width ? TileColumns : width;
             int size = Math.Min(width, columns - j);
+            nint step = TKernel.Lanes * TKernel.Vectors;
             double* right;
             if (packedB is not null)
             {
@@ -164,52 +185,54 @@ internal unsafe struct GemmDriver<T, TKernel>
             else if (size * Reals % TKernel.Lanes == 0)
             {
                 right = (double*)(b.Data + firstColumn + j);
+                step = b.RowStride * Reals;
             }
             else
             {
                 // The last vector would read past the row: a padded copy.
                 right = _scratch.Right((long)TileColumns * a.Columns * Reals);
                 PackPanel(b, firstColumn + j, size, (T*)right);
-                call = _call with { BStep = TKernel.Lanes * TKernel.Vectors };
             }
 
-            Panel(call, left, leftStep, packedA is not null, right, i, rows, firstColumn + j, size);
+            _call.BStep = step;
+            if (Reals == 1 && _c.ColumnStride == 1 && size % TKernel.Lanes == 0)
+                DirectTiles(tiles, left, leftStep, leftTile, right, (double*)(c + j), size / TKernel.Lanes);
+            else
+                TilesAside(tiles, left, leftStep, leftTile, right, c + (j * _c.ColumnStride), size);
         }
     }
 
-    /// <summary>All row tiles of a block against one panel of B.</summary>
+    /// <summary>All row tiles of a block against one panel of B, written by the micro-kernel.</summary>
     [MethodImpl(MethodImplOptions.AggressiveOptimization)]
-    private void Panel(
-        in TileCall call, double* left, nint leftStep, bool packed, double* right, int i, int rows, int j, int columns)
+    private readonly void DirectTiles(
+        in RowTiles tiles, double* left, nint leftStep, nint leftTile, double* right, double* c, int vectors)
     {
-        int tiles = (rows + TileRows - 1) / TileRows;
-        int vectors = ((columns * Reals) + TKernel.Lanes - 1) / TKernel.Lanes;
-        bool direct = Reals == 1 && _c.ColumnStride == 1 && columns == vectors * TKernel.Lanes;
-        double* tile = _scratch.Tile;
-        TileCall aside = call with { CRow = vectors * TKernel.Lanes, Accumulate = false };
-        T* c = _c.Data + (i * _c.RowStride) + (j * _c.ColumnStride);
-        for (int t = 0; t < tiles; t++)
+        for (int t = 0; t < tiles.Count; t++)
         {
-            Split(rows, tiles, t, out int start, out int size);
-            double* from = left + ((packed ? t * TileRows : start) * leftStep);
-            T* to = c + (start * _c.RowStride);
-            if (direct)
-            {
-                TKernel.Run(size, vectors, call, from, right, (double*)to);
-                continue;
-            }
-
-            TKernel.Run(size * Reals, vectors, aside, from, right, tile);
-            _end.Write(tile, aside.CRow, size, columns, to, _c.RowStride, _c.ColumnStride, call.Accumulate);
+            int size = t < tiles.Larger ? tiles.Size + 1 : tiles.Size;
+            TKernel.Run(size, vectors, _call, left, right, c);
+            left += (size * leftStep) + leftTile;
+            c += size * _c.RowStride;
         }
     }
 
-    /// <summary>Cuts rows into tiles whose sizes differ by at most one, so that none is too thin to run at full speed.</summary>
-    [MethodImpl(MethodImplOptions.AggressiveInlining)]
-    private static void Split(int rows, int tiles, int tile, out int start, out int size)
+    /// <summary>The same through a tile beside C, for ragged edges, strided columns and complex numbers.</summary>
+    [MethodImpl(MethodImplOptions.AggressiveOptimization)]
+    private readonly void TilesAside(
+        in RowTiles tiles, double* left, nint leftStep, nint leftTile, double* right, T* c, int columns)
     {
-        int small = rows / tiles, larger = rows - (small * tiles);
-        start = (tile * small) + Math.Min(tile, larger);
-        size = tile < larger ? small + 1 : small;
+        int vectors = ((columns * Reals) + TKernel.Lanes - 1) / TKernel.Lanes;
+        double* tile = _scratch.Tile;
+        TileCall aside = _call;
+        aside.CRow = vectors * TKernel.Lanes;
+        aside.Accumulate = false;
+        for (int t = 0; t < tiles.Count; t++)
+        {
+            int size = t < tiles.Larger ? tiles.Size + 1 : tiles.Size;
+            TKernel.Run(size * Reals, vectors, aside, left, right, tile);
+            _end.Write(tile, aside.CRow, size, columns, c, _c.RowStride, _c.ColumnStride, _call.Accumulate);
+            left += (size * leftStep) + leftTile;
+            c += size * _c.RowStride;
+        }
     }
 }

@@ -28,58 +28,86 @@ internal readonly unsafe struct TileEnd(bool conjugateA, bool conjugateB)
     /// <param name="row">Row stride of C.</param>
     /// <param name="column">Column stride of C.</param>
     /// <param name="accumulate">Whether to add.</param>
+    [MethodImpl(MethodImplOptions.AggressiveInlining)]
     internal void Write<T>(
-        double* tile, nint tileRow, int rows, int columns, T* c, nint row, nint column, bool accumulate)
+        double* tile, nint tileRow, nint rows, nint columns, T* c, nint row, nint column, bool accumulate)
         where T : unmanaged, INumberBase<T>
     {
-        for (int i = 0; i < rows; i++)
-        {
-            if (typeof(T) == typeof(double))
-                WriteRow(tile + (i * tileRow), columns, (double*)c, column, accumulate);
-            else
-                WriteRow(tile + (2 * i * tileRow), tileRow, columns, (Complex*)c, column, accumulate);
-            c += row;
-        }
+        if (typeof(T) != typeof(double) && column == 1)
+            WriteComplex(tile, tileRow, rows, columns, (double*)c, row, accumulate);
+        else if (typeof(T) != typeof(double))
+            WriteComplexStrided(tile, tileRow, rows, columns, (Complex*)c, row, column, accumulate);
+        else if (column == 1)
+            WriteReal(tile, tileRow, rows, columns, (double*)c, row, accumulate);
+        else
+            WriteRealStrided(tile, tileRow, rows, columns, (double*)c, row, column, accumulate);
     }
 
     [MethodImpl(MethodImplOptions.AggressiveOptimization)]
-    private static void WriteRow(double* tile, int columns, double* c, nint column, bool accumulate)
+    private static void WriteReal(
+        double* tile, nint tileRow, nint rows, nint columns, double* c, nint row, bool accumulate)
     {
-        int j = 0;
-        if (column == 1)
+        nint whole = columns & ~3, rest = columns & 3;
+        for (; rows > 0; rows--, tile += tileRow, c += row)
         {
-            for (; j <= columns - 4; j += 4)
+            for (nint j = 0; j < whole; j += 4)
                 (accumulate ? V.Load(c + j) + V.Load(tile + j) : V.Load(tile + j)).Store(c + j);
+            if (rest == 0)
+                continue;
+            Vector256<double> last = LaneTail.Load(tile + whole, rest);
+            LaneTail.Store(accumulate ? LaneTail.Load(c + whole, rest) + last : last, c + whole, rest);
         }
-
-        c += j * column;
-        for (; j < columns; j++, c += column)
-            *c = accumulate ? *c + tile[j] : tile[j];
     }
 
     [MethodImpl(MethodImplOptions.AggressiveOptimization)]
-    private void WriteRow(double* tile, nint tileRow, int columns, Complex* c, nint column, bool accumulate)
+    private static void WriteRealStrided(
+        double* tile, nint tileRow, nint rows, nint columns, double* c, nint row, nint column, bool accumulate)
     {
-        int j = 0;
-        if (column == 1)
+        for (; rows > 0; rows--, tile += tileRow, c += row)
         {
-            Vector256<double> straight = V.Create(1, _xv, 1, _xv), crossed = V.Create(_yv, _yu, _yv, _yu);
-            for (; j <= columns - 2; j += 2)
-            {
-                // Products with +-1 are exact, so the fused form rounds once like the scalar one below.
-                Vector256<double> y = ComplexVector.Exchange(V.Load(tile + tileRow + (2 * j)));
-                Vector256<double> sum = V.FusedMultiplyAdd(crossed, y, straight * V.Load(tile + (2 * j)));
-                double* to = (double*)(c + j);
-                (accumulate ? V.Load(to) + sum : sum).Store(to);
-            }
+            double* to = c;
+            for (nint j = 0; j < columns; j++, to += column)
+                *to = accumulate ? *to + tile[j] : tile[j];
         }
+    }
 
-        c += j * column;
-        for (; j < columns; j++, c += column)
+    [MethodImpl(MethodImplOptions.AggressiveOptimization)]
+    private void WriteComplex(
+        double* tile, nint tileRow, nint rows, nint columns, double* c, nint row, bool accumulate)
+    {
+        Vector256<double> straight = V.Create(1, _xv, 1, _xv), crossed = V.Create(_yv, _yu, _yv, _yu);
+        for (; rows > 0; rows--, tile += 2 * tileRow, c += 2 * row)
         {
-            double* x = tile + (2 * j), y = x + tileRow;
-            var sum = new Complex(x[0] + (_yv * y[1]), (_xv * x[1]) + (_yu * y[0]));
-            *c = accumulate ? new Complex(c->Real + sum.Real, c->Imaginary + sum.Imaginary) : sum;
+            nint j = 0;
+            for (; j <= (2 * columns) - 4; j += 4)
+            {
+                // Products with +-1 are exact, so this rounds once, like the scalar form below.
+                Vector256<double> y = ComplexVector.Exchange(V.Load(tile + tileRow + j));
+                Vector256<double> sum = V.FusedMultiplyAdd(crossed, y, straight * V.Load(tile + j));
+                (accumulate ? V.Load(c + j) + sum : sum).Store(c + j);
+            }
+
+            if (j < 2 * columns)
+                WriteElement(tile + j, tileRow, (Complex*)(c + j), accumulate);
         }
+    }
+
+    [MethodImpl(MethodImplOptions.AggressiveOptimization)]
+    private void WriteComplexStrided(
+        double* tile, nint tileRow, nint rows, nint columns, Complex* c, nint row, nint column, bool accumulate)
+    {
+        for (; rows > 0; rows--, tile += 2 * tileRow, c += row)
+        {
+            for (nint j = 0; j < columns; j++)
+                WriteElement(tile + (2 * j), tileRow, c + (j * column), accumulate);
+        }
+    }
+
+    [MethodImpl(MethodImplOptions.AggressiveInlining)]
+    private void WriteElement(double* x, nint tileRow, Complex* c, bool accumulate)
+    {
+        double* y = x + tileRow;
+        double re = x[0] + (_yv * y[1]), im = (_xv * x[1]) + (_yu * y[0]);
+        *c = accumulate ? new Complex(c->Real + re, c->Imaginary + im) : new Complex(re, im);
     }
 }
