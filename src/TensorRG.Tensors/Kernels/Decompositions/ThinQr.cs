@@ -53,7 +53,7 @@ internal static unsafe class ThinQr
             MatrixView<T> column = w.Slice(0, j, a.Rows, 1);
             scales[j] = Entry.Exponent(Entry.FiniteLargestPart(column, "Thin QR"));
             if (scales[j] != 0)
-                Entry.CopyScaled(column, column, scales[j]);
+                Entry.Scale(column, scales[j]);
         }
     }
 
@@ -64,7 +64,7 @@ internal static unsafe class ThinQr
         for (int j = 0; j < r.Columns; j++)
         {
             if (scales[j] != 0)
-                Entry.CopyScaled(r.Slice(0, j, r.Rows, 1), r.Slice(0, j, r.Rows, 1), -scales[j]);
+                Entry.Scale(r.Slice(0, j, r.Rows, 1), -scales[j]);
         }
     }
 
