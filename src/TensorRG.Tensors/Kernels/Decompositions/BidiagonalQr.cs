@@ -1,3 +1,5 @@
+using System.Runtime.CompilerServices;
+
 namespace TensorRG.Tensors.Kernels.Decompositions;
 
 /// <summary>
@@ -62,6 +64,7 @@ internal ref struct BidiagonalQr(Span<double> d, Span<double> e, RotationBatch l
     }
 
     /// <summary>First row of the unreduced block that ends at row high; negligible elements become zero on the way.</summary>
+    [MethodImpl(MethodImplOptions.AggressiveOptimization)]
     private readonly int BlockStart(int high)
     {
         for (int i = high; ; i--)
@@ -107,6 +110,7 @@ internal ref struct BidiagonalQr(Span<double> d, Span<double> e, RotationBatch l
         return ratio * ratio < Math.ScaleB(1, -52) ? 0 : shift;
     }
 
+    [MethodImpl(MethodImplOptions.AggressiveOptimization)]
     private readonly void ZeroShiftDown(int low, int high, Span<double> u, Span<double> v)
     {
         double c = 1, oldC = 1, oldS = 0;
@@ -125,6 +129,7 @@ internal ref struct BidiagonalQr(Span<double> d, Span<double> e, RotationBatch l
         _e[high - 1] = last * oldS;
     }
 
+    [MethodImpl(MethodImplOptions.AggressiveOptimization)]
     private readonly void ZeroShiftUp(int low, int high, Span<double> u, Span<double> v)
     {
         double c = 1, oldC = 1, oldS = 0;
@@ -143,6 +148,7 @@ internal ref struct BidiagonalQr(Span<double> d, Span<double> e, RotationBatch l
         _e[low] = last * oldS;
     }
 
+    [MethodImpl(MethodImplOptions.AggressiveOptimization)]
     private readonly void ShiftedDown(int low, int high, double shift, Span<double> u, Span<double> v)
     {
         double f = (Math.Abs(_d[low]) - shift) * (Math.CopySign(1, _d[low]) + (shift / _d[low])), g = _e[low];
@@ -169,6 +175,7 @@ internal ref struct BidiagonalQr(Span<double> d, Span<double> e, RotationBatch l
         _e[high - 1] = f;
     }
 
+    [MethodImpl(MethodImplOptions.AggressiveOptimization)]
     private readonly void ShiftedUp(int low, int high, double shift, Span<double> u, Span<double> v)
     {
         double f = (Math.Abs(_d[high]) - shift) * (Math.CopySign(1, _d[high]) + (shift / _d[high])), g = _e[high - 1];

@@ -1,3 +1,5 @@
+using System.Runtime.CompilerServices;
+
 namespace TensorRG.Tensors.Kernels.Decompositions;
 
 /// <summary>
@@ -53,6 +55,7 @@ internal static class TridiagonalQl
         return norm * Math.ScaleB(1, -53);
     }
 
+    [MethodImpl(MethodImplOptions.AggressiveOptimization)]
     private static void Sweep(Span<double> d, Span<double> e, int low, int high, Span<double> rotations)
     {
         double g = (d[low + 1] - d[low]) / (2 * e[low]);
