@@ -6,7 +6,8 @@ namespace TensorRG.Tensors.Decompositions;
 
 /// <summary>
 /// The matrix between some legs of an explicit tensor and the rest. The tensor is read as a block-diagonal matrix once; after that each
-/// application is one matrix product a sector.
+/// application is one matrix product a sector. For the adjoint a second copy is kept the other way round, so that the products read both
+/// along their rows: gathering columns would cost as much as the product itself where there are few vectors.
 /// </summary>
 /// <typeparam name="T">Element type.</typeparam>
 public sealed class TensorMap<T> : ILinearMap<T>, IDisposable
@@ -14,6 +15,7 @@ public sealed class TensorMap<T> : ILinearMap<T>, IDisposable
 {
     private readonly IKernels<T> _kernels;
     private readonly BlockMatrix<T> _matrix;
+    private readonly Lazy<BlockMatrix<T>> _turned;
 
     /// <summary>Reads a tensor as a matrix.</summary>
     /// <param name="kernels">Dense kernels.</param>
@@ -29,6 +31,8 @@ public sealed class TensorMap<T> : ILinearMap<T>, IDisposable
             throw new ArgumentException("Only a tensor without flux can be decomposed.", nameof(tensor));
         _kernels = kernels;
         _matrix = BlockMatrix<T>.From(tensor, rowAxes, columnAxes);
+        int[] rows = [.. rowAxes], columns = [.. columnAxes];
+        _turned = new Lazy<BlockMatrix<T>>(() => BlockMatrix<T>.From(tensor, columns, rows, copy: true));
     }
 
     /// <inheritdoc/>
@@ -47,7 +51,12 @@ public sealed class TensorMap<T> : ILinearMap<T>, IDisposable
     public Tensor<T> ToTensor() => _matrix.ToTensor();
 
     /// <inheritdoc/>
-    public void Dispose() => _matrix.Dispose();
+    public void Dispose()
+    {
+        _matrix.Dispose();
+        if (_turned.IsValueCreated)
+            _turned.Value.Dispose();
+    }
 
     internal TruncatedSvd<T> Decompose(CutRule rule) => DenseSvd.Compute(_kernels, _matrix, rule);
 
@@ -60,11 +69,13 @@ public sealed class TensorMap<T> : ILinearMap<T>, IDisposable
         foreach (Charge charge in result.Charges)
         {
             if (_matrix.Contains(charge) && source.Contains(charge))
-                _kernels.Multiply(adjoint ? _matrix[charge].Adjoint : _matrix[charge], source[charge], result[charge], accumulate: false);
+                _kernels.Multiply(adjoint ? AdjointBlock(charge) : _matrix[charge], source[charge], result[charge], accumulate: false);
             else
                 result.Clear(charge);
         }
 
         return result.ToTensor();
     }
+
+    private MatrixView<T> AdjointBlock(Charge rowCharge) => _turned.Value[_matrix.ColumnCharge(rowCharge)].Conjugate;
 }
