@@ -27,7 +27,7 @@ internal static class ChiJson
     {
         JsonArray points = report.Table.ToJson();
         for (int i = 0; i < points.Count; i++)
-            points[i]!.AsObject().Add("run", report.Runs[i].Folder.Path);
+            points[i]!.AsObject().Add("run", ShownPath.Of(report.Runs[i].Folder.Path));
         return points;
     }
 }

@@ -20,7 +20,7 @@ internal static class SummaryJson
             ("steps", report.Folder.Inputs.Steps));
         foreach ((string name, JsonNode? value) in Numbers(report.Summary))
             json.Add(name, value?.DeepClone());
-        json.Add("run", report.Folder.Path);
+        json.Add("run", ShownPath.Of(report.Folder.Path));
         json.Add("identity", report.Folder.Identity);
         json.Add("backend", report.Backend.Name);
         json.Add("backendDescription", report.Backend.Description);

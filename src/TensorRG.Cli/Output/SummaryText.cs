@@ -24,7 +24,7 @@ internal static class SummaryText
         ExactRows(grid, summary);
         Row(grid, "X", FormattableString.Invariant($"{summary.DegeneracyRatio:0.0000}"));
         Row(grid, "phase", summary.Phase.Summary);
-        Row(grid, "run", report.Folder.Path);
+        Row(grid, "run", ShownPath.Of(report.Folder.Path));
         console.Write(grid);
     }
 
