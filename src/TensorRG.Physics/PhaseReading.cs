@@ -50,7 +50,7 @@ public sealed record PhaseReading(int? Phases, double SettledAt, double Plateau,
 
     private static string Settled(int phases, double size, double plateau, StepRecord[] squares, int start, int length)
     {
-        string state = phases == 1 ? "one phase: disordered" : $"{phases} coexisting phases: ordered";
+        string state = phases == 1 ? "one phase, disordered" : $"{phases} coexisting phases, ordered";
         if (double.IsNaN(plateau))
             return FormattableString.Invariant($"X = {phases} from length {Length(size)} on: {state}.");
         return FormattableString.Invariant(

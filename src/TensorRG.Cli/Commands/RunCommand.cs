@@ -45,7 +45,7 @@ internal static class RunCommand
         RunReport? report = RunExecutor.Execute(folder, backend, threads, OutputOptions.Display(mode), signal.Token);
         if (report is null)
         {
-            Consoles.Error.WriteLine($"Stopped. Go on with: tensorrg resume '{folder.Path}'");
+            Consoles.Error.WriteLine($"Stopped. Go on with: tensorrg resume '{ShownPath.Of(folder.Path)}'");
             return ExitCode.Stopped;
         }
 

@@ -2,10 +2,10 @@ using Spectre.Console;
 
 namespace TensorRG.Cli.Output;
 
-/// <summary>The two consoles of the process. Wide lines are not wrapped when the output is no terminal.</summary>
+/// <summary>The two consoles of the process. Output that is no terminal is laid out for 120 columns.</summary>
 internal static class Consoles
 {
-    private const int PipeWidth = 400;
+    private const int PipeWidth = 120;
 
     public static IAnsiConsole Out { get; } = Create(Console.Out, Console.IsOutputRedirected);
 

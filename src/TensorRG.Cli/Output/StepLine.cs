@@ -25,7 +25,7 @@ internal static class StepLine
         => record.LengthScale < 1e5 ? record.LengthScale.ToString("0.0", CultureInfo.InvariantCulture) : FormattableString.Invariant($"2^{Math.Log2(record.LengthScale):0.0}");
 
     private static string LogZ(StepRecord record)
-        => double.IsFinite(record.LogZPerSite) ? record.LogZPerSite.ToString("0.0000000000000000", CultureInfo.InvariantCulture) : "-";
+        => double.IsFinite(record.LogZPerSite) ? record.LogZPerSite.ToString("F16", CultureInfo.InvariantCulture) : "-";
 
     private static string Small(double value)
     {

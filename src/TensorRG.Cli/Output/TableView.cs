@@ -24,7 +24,7 @@ internal static class TableView
     private static Spectre.Console.TableColumn Heading(Reports.TableColumn column)
     {
         string title = column.Style == NumberStyle.Duration ? column.Title : column.Heading;
-        Spectre.Console.TableColumn result = new Spectre.Console.TableColumn(new Text(title)).NoWrap();
-        return column.Kind == ColumnKind.Text ? result : result.RightAligned();
+        var result = new Spectre.Console.TableColumn(new Text(title));
+        return column.Kind == ColumnKind.Text ? result : result.NoWrap().RightAligned();
     }
 }
