@@ -150,6 +150,8 @@ internal sealed class SubspaceIteration<T>
     private bool Grow(Dictionary<Charge, double[]> values)
     {
         Dictionary<Charge, int> counts = SectorCut.Counts(values, _rule, out _cutsMultiplet);
+        if (counts.Values.Sum() == 0)
+            throw new DecompositionException("The matrix is zero: it has no singular value to keep.");
         _kept.Clear();
         var missing = new SortedDictionary<Charge, int>();
         foreach ((Charge charge, int count) in counts)
