@@ -31,6 +31,18 @@ public sealed class CompensatedSumTests
         });
 
     [Fact]
+    public void An_infinite_term_makes_the_sum_infinite()
+    {
+        var sum = new CompensatedSum(1, 1e-20);
+        sum.Add(double.NegativeInfinity);
+        Assert.Equal(double.NegativeInfinity, sum.Value);
+        sum.Add(3);
+        Assert.Equal(double.NegativeInfinity, sum.Value);
+        sum.Add(double.PositiveInfinity);
+        Assert.True(double.IsNaN(sum.Value));
+    }
+
+    [Fact]
     public void A_restored_sum_goes_on_with_the_same_bits()
     {
         var whole = default(CompensatedSum);
