@@ -16,7 +16,10 @@ public interface IFlow
     /// <exception cref="ArithmeticException">The step failed: a decomposition did not converge, or Z vanished or overflowed.</exception>
     StepRecord Advance();
 
-    /// <summary>The complete state between steps, records included.</summary>
+    /// <summary>
+    /// The complete state between steps, records included but without their times: it depends on the inputs alone. Restored
+    /// records carry NaN as time.
+    /// </summary>
     Snapshot Save();
 
     /// <summary>Replaces the state by a saved one.</summary>

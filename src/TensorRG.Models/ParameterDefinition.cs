@@ -36,9 +36,9 @@ public sealed record ParameterDefinition
     public bool DefaultsToCritical { get; init; }
 
     /// <summary>The allowed values in words, such as "a whole number from 2 to 64".</summary>
-    public string RangeText => string.Create(
-        CultureInfo.InvariantCulture,
-        $"a {(IsInteger ? "whole " : "")}number from {Minimum} to {Maximum}");
+    public string RangeText => IsInteger
+        ? $"a whole number from {Short(Minimum)} to {Short(Maximum)}"
+        : $"a number from {Short(Minimum)} to {Short(Maximum)}";
 
     /// <summary>The default in words.</summary>
     public string DefaultText => DefaultsToCritical
@@ -111,4 +111,9 @@ public sealed record ParameterDefinition
         Maximum = 64,
         IsInteger = true,
     };
+
+    /// <summary>A bound as people write it: 64, 1e-9, -1e6.</summary>
+    private static string Short(double bound) => bound != 0 && Math.Abs(Math.Log10(Math.Abs(bound))) >= 5
+        ? bound.ToString("0.##e0", CultureInfo.InvariantCulture)
+        : bound.ToString(CultureInfo.InvariantCulture);
 }

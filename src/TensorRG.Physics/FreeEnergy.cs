@@ -24,7 +24,7 @@ public static class FreeEnergy
         return new Estimate(
             value,
             [
-                new ErrorPart("truncation", scheme.TruncationLaw.Factor * measure / sitesPerVertex, FormattableString.Invariant($"discarded weights, D = {measure:0.0e+00}, times {scheme.TruncationLaw.Factor} from exactly solved models")),
+                new ErrorPart("truncation", scheme.TruncationLaw.Bar(records) / sitesPerVertex, FormattableString.Invariant($"discarded weights (D = {measure:0.0e+00}) by the law measured on exactly solved models")),
                 new ErrorPart("steps", StepError(records), "how much the last steps still moved it"),
                 new ErrorPart("round-off", RoundOff * Math.Max(1, Math.Abs(value)), "a few units in the last place"),
             ]);

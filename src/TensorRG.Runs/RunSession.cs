@@ -6,6 +6,9 @@ namespace TensorRG.Runs;
 /// <summary>One process working on one run, under its lock.</summary>
 internal sealed class RunSession
 {
+    /// <summary>Steps 0 and 1: flow.csv is written just before the first checkpoint, and a kill may fall in between.</summary>
+    private const int RowsBeforeFirstCheckpoint = 2;
+
     private readonly RunFolder _run;
     private readonly IFlow _flow;
     private readonly RunOptions _options;
@@ -58,7 +61,7 @@ internal sealed class RunSession
         IReadOnlyList<StepRecord> timed = ReadTimes();
         if (loaded.Snapshot is { } snapshot)
             _flow.Restore(snapshot);
-        else if (timed.Count > 1)
+        else if (timed.Count > RowsBeforeFirstCheckpoint)
             _notices.Add("There is no checkpoint although steps were done; they are computed again.");
         _store.SetAside(loaded);
         _store.DeleteOld();

@@ -12,12 +12,14 @@ namespace TensorRG.Runs;
 /// </summary>
 internal static class SnapshotHdf5
 {
+    private const int MetadataBytes = 64 * 1024;
     private const string Schema = "schema";
     private const string Identity = "identity";
     private const string Step = "step";
 
     /// <summary>Writes a snapshot, leaving the first bytes of the file for the caller.</summary>
     /// <exception cref="ArgumentException">The snapshot cannot be stored.</exception>
+    /// <exception cref="RunStoreException">The snapshot is larger than a file in memory can be.</exception>
     public static byte[] Write(Snapshot snapshot, string identity, int reservedBytes)
     {
         SnapshotNames.Check(snapshot);
@@ -27,7 +29,7 @@ internal static class SnapshotHdf5
         file.Attributes[Step] = snapshot.Step;
         foreach ((string name, object value) in InOrder(snapshot))
             Add(file, name, value);
-        using MemoryStream stream = new();
+        using MemoryStream stream = new(Capacity(snapshot, reservedBytes));
         file.Write(stream, new H5WriteOptions(UserBlockSize: (ulong)reservedBytes));
         return stream.ToArray();
     }
@@ -58,6 +60,16 @@ internal static class SnapshotHdf5
         left.Count == right.Count && left.All(p => right.TryGetValue(p.Key, out T? other) && equal(p.Value, other));
 
     private static ReadOnlySpan<long> Bits(double[] values) => MemoryMarshal.Cast<double, long>(values);
+
+    /// <summary>Room for the arrays, so that the stream need not grow by doubling.</summary>
+    private static int Capacity(Snapshot snapshot, int reservedBytes)
+    {
+        long values = snapshot.Numbers.Values.Sum(v => v.LongLength) + snapshot.Integers.Values.Sum(v => v.LongLength);
+        long bytes = reservedBytes + MetadataBytes + (sizeof(double) * values);
+        return bytes <= Array.MaxLength ? (int)bytes : throw new RunStoreException(
+            RunStoreProblem.Storage,
+            $"The state takes {bytes} bytes; a checkpoint holds at most {Array.MaxLength}. Use a smaller bond dimension.");
+    }
 
     private static IEnumerable<(string Name, object Value)> InOrder(Snapshot snapshot) =>
         snapshot.Numbers.Select(p => (p.Key, (object)p.Value))

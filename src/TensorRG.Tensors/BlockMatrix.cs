@@ -118,6 +118,17 @@ internal sealed unsafe class BlockMatrix<T> : IDisposable
     /// </summary>
     public BlockMatrix<T> WithRows(FusedSpace rows) => new(rows, Columns, Flux, _blocks, null, this);
 
+    /// <summary>Sets a block to zero.</summary>
+    public void Clear(Charge rowCharge)
+    {
+        MatrixView<T> view = _blocks[rowCharge];
+        for (int i = 0; i < view.Rows; i++)
+        {
+            for (int j = 0; j < view.Columns; j++)
+                view[i, j] = T.Zero;
+        }
+    }
+
     public void Dispose()
     {
         _gathered?.Dispose();

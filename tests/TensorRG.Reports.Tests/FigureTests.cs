@@ -13,7 +13,7 @@ public class FigureTests
     public void Every_figure_draws_as_a_PNG_of_its_size_with_ink_on_it(string name)
     {
         var figure = Gallery.All[name];
-        var png = FigureRenderer.Render(figure).Png.AsSpan();
+        var png = Gallery.Rendered(name).Png.AsSpan();
         Assert.Equal([0x89, (byte)'P', (byte)'N', (byte)'G'], png[..4].ToArray());
         Assert.Equal(figure.Width, BinaryPrimitives.ReadInt32BigEndian(png[16..]));
         Assert.Equal(figure.Height, BinaryPrimitives.ReadInt32BigEndian(png[20..]));
@@ -27,7 +27,7 @@ public class FigureTests
     public void Every_SVG_is_valid_prefixed_and_has_no_black_rectangle(string name)
     {
         var figure = Gallery.All[name];
-        var root = XDocument.Parse(FigureRenderer.Render(figure).Svg).Root!;
+        var root = XDocument.Parse(Gallery.Rendered(name).Svg).Root!;
         Assert.Equal(s_svg + "svg", root.Name);
         Assert.Equal(FormattableString.Invariant($"0 0 {figure.Width} {figure.Height}"), root.Attribute("viewBox")!.Value);
         Assert.Equal(figure.Title, root.Element(s_svg + "title")!.Value);
@@ -45,7 +45,7 @@ public class FigureTests
     {
         Skip.If(PlotFont.Default.Notices.Length > 0, "no font on this machine");
         var figure = Gallery.All[name];
-        var texts = SvgText.Read(FigureRenderer.Render(figure).Svg);
+        var texts = SvgText.Read(Gallery.Rendered(name).Svg);
         Assert.NotEmpty(texts);
         Assert.All(texts, t => Assert.True(t.Left >= 0 && t.Top >= 0 && t.Right <= figure.Width && t.Bottom <= figure.Height, $"{t} leaves the figure"));
         for (var i = 0; i < texts.Count; i++)
@@ -54,11 +54,30 @@ public class FigureTests
         }
     }
 
+    [Theory]
+    [MemberData(nameof(Gallery.Names), MemberType = typeof(Gallery))]
+    public void Title_legend_data_and_caption_keep_to_themselves(string name)
+    {
+        var figure = Gallery.All[name];
+        var layout = new FigureLayout(figure, [.. figure.Panels.Select(p => new PanelData(p, superscripts: true))], PlotFont.Default);
+        var above = FigureLayout.TitleBaseline(layout.TitleLines.Length - 1);
+        foreach (var area in layout.Areas)
+        {
+            Assert.True(area.Top > above, "a panel begins above the end of the title or of the panel before");
+            var legendEnd = area.Legend.Select(e => FigureLayout.LegendCentre(area, e) + FigureLayout.LegendSize / 2).Append(area.Top).Max();
+            Assert.True(legendEnd < area.Data.Top, "the legend covers data");
+            Assert.All(area.Legend, e => Assert.True(e.Left + FigureLayout.LegendKeyWidth <= area.Data.Right, "the legend leaves the figure"));
+            Assert.True(area.Data.Bottom - area.Data.Top >= 150 && area.Data.Right - area.Data.Left >= 600, "hardly any room for data");
+            above = area.Bottom - 1;
+        }
+        Assert.True(layout.CaptionTop >= layout.Areas[^1].Bottom - 1, "the caption covers the last panel");
+    }
+
     [SkippableFact]
     public void Titles_labels_ticks_legend_and_caption_are_text_once_each()
     {
         Skip.If(PlotFont.Default.Notices.Length > 0, "no font on this machine");
-        var texts = SvgText.Read(FigureRenderer.Render(Gallery.All["convergence"]).Svg).Select(t => t.Text).ToList();
+        var texts = SvgText.Read(Gallery.Rendered("convergence").Svg).Select(t => t.Text).ToList();
         string[] expected =
         [
             "Convergence of ln Z per site with the bond dimension", "bond dimension χ", "|relative deviation| of ln Z per site",
@@ -75,7 +94,7 @@ public class FigureTests
     {
         foreach (var (name, figure) in Gallery.All)
         {
-            var plain = FigureRenderer.Render(figure);
+            var plain = Gallery.Rendered(name);
             var other = Cultures.Run(culture, () => FigureRenderer.Render(figure));
             Assert.True(plain.Svg == other.Svg, name);
             Assert.True(plain.Png.SequenceEqual(other.Png), name);
@@ -93,7 +112,7 @@ public class FigureTests
     [Fact]
     public void Points_stand_where_their_values_say()
     {
-        var svg = XDocument.Parse(FigureRenderer.Render(Gallery.All["convergence"]).Svg);
+        var svg = XDocument.Parse(Gallery.Rendered("convergence").Svg);
         var squares = svg.Descendants(s_svg + "rect").Where(r => (string?)r.Attribute("fill") == "#D55E00" && r.Parent!.Attribute("clip-path") is not null);
         var centres = squares.Select(r => ((double)r.Attribute("x")! + 5.5, (double)r.Attribute("y")! + 5.5)).ToList();
         Assert.Equal(3, centres.Count);
@@ -116,11 +135,11 @@ public class FigureTests
     [Fact]
     public void What_cannot_be_shown_is_named()
     {
-        Assert.Empty(FigureRenderer.Render(Gallery.All["convergence"]).Notices);
-        Assert.Contains("1 of 5 points of 'one'", Assert.Single(FigureRenderer.Render(Gallery.All["convergence one series"]).Notices), StringComparison.Ordinal);
-        Assert.Contains("2 of 2 points of 'none'", Assert.Single(FigureRenderer.Render(Gallery.All["convergence equal"]).Notices), StringComparison.Ordinal);
-        Assert.Contains(FigureRenderer.Render(Gallery.All["convergence nothing"]).Notices, n => n.Contains("'error bar of the extrapolation'", StringComparison.Ordinal));
-        var flow = FigureRenderer.Render(Gallery.All["flow"]).Notices;
+        Assert.Empty(Gallery.Rendered("convergence").Notices);
+        Assert.Contains("1 of 5 points of 'one'", Assert.Single(Gallery.Rendered("convergence one series").Notices), StringComparison.Ordinal);
+        Assert.Contains("2 of 2 points of 'none'", Assert.Single(Gallery.Rendered("convergence equal").Notices), StringComparison.Ordinal);
+        Assert.Contains(Gallery.Rendered("convergence nothing").Notices, n => n.Contains("'error bar of the extrapolation'", StringComparison.Ordinal));
+        var flow = Gallery.Rendered("flow").Notices;
         Assert.Contains(flow, n => n.Contains("51 of 51 points of 'n = 7'", StringComparison.Ordinal));
         Assert.Contains(flow, n => n.Contains("beyond the end of the axis", StringComparison.Ordinal));
     }

@@ -1,3 +1,4 @@
+using System.Collections.Concurrent;
 using System.Collections.Immutable;
 
 namespace TensorRG.Reports.Tests;
@@ -6,6 +7,8 @@ namespace TensorRG.Reports.Tests;
 public static class Gallery
 {
     private const string Caption = "square Ising, J = 1, h = 0, T = 2.269185314213022 (critical); bond-weighted TRG, k = -1/2, 50 steps; relative deviation from the exact ln Z per site (Onsager 1944)";
+
+    private static readonly ConcurrentDictionary<string, RenderedFigure> s_rendered = new();
 
     public static TheoryData<string> Names => [.. All.Keys.Order(StringComparer.Ordinal)];
 
@@ -27,6 +30,9 @@ public static class Gallery
         ["extreme"] = Line("extreme", new PlotAxis("x"), new PlotAxis("y"), Series("e", (-1e300, 1e-300), (1e300, 1e308))),
         ["long words"] = Line("long", new PlotAxis(new string('x', 300)), new PlotAxis(new string('y', 200)), [.. Enumerable.Range(1, 9).Select(i => Series($"a rather long series name, number {i}", (i, i), (i + 1, 2 * i)))]),
     };
+
+    /// <summary>A figure drawn under the culture of the test run, once for all tests.</summary>
+    public static RenderedFigure Rendered(string name) => s_rendered.GetOrAdd(name, n => FigureRenderer.Render(All[n]));
 
     public static DataSeries Series(string name, params (double X, double Y)[] points) => new(name, [.. points.Select(p => new DataPoint(p.X, p.Y))]);
 

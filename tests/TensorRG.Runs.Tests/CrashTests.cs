@@ -4,6 +4,7 @@ namespace TensorRG.Runs.Tests;
 public class CrashTests
 {
     private const string Folder = "/runs/a";
+    private const int MostDeaths = 1000;
     private readonly string _expected = Uninterrupted();
 
     [Theory]
@@ -46,6 +47,7 @@ public class CrashTests
                 if (files.Points < files.DieAt)
                     break;
                 deaths++;
+                Assert.True(deaths < MostDeaths, $"Seed {seed}: the run does not get on.");
                 files = files.Survivor(kind, random.Next(1, 60));
             }
 
@@ -109,11 +111,14 @@ public class CrashTests
         return stored == Sample.Steps ? Sample.Steps - 1 : stored;
     }
 
+    /// <summary>Returns the step that was resumed from, after checking that the times up to it were not lost.</summary>
     private static int Complete(MemoryFiles files)
     {
-        int from = Sample.Steps;
-        Sample.Run(Open(files), new RunOptions { Checkpoints = Sample.EveryStep, Started = s => from = s.Step });
-        return from;
+        RunStart? start = null;
+        Sample.Run(Open(files), new RunOptions { Checkpoints = Sample.EveryStep, Started = s => start = s });
+        Assert.All(start?.Records ?? [], r => Assert.True(double.IsFinite(r.Seconds)));
+        Assert.Empty(start?.Notices ?? []);
+        return start?.Step ?? Sample.Steps;
     }
 
     /// <summary>Two generations, no half-written files.</summary>

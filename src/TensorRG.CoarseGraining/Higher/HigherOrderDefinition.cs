@@ -18,7 +18,7 @@ internal sealed class HigherOrderDefinition : SchemeDefinition
     public override double CostExponent => 7;
 
     /// <inheritdoc/>
-    public override TruncationLaw TruncationLaw => new(2, 2);
+    public override TruncationLaw TruncationLaw => new(2, 4, 0);
 
     /// <inheritdoc/>
     public override IScheme<T> Create<T>(TensorAlgebra<T> algebra, SchemeSettings settings)

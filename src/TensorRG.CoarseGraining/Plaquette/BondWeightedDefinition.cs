@@ -21,7 +21,7 @@ internal sealed class BondWeightedDefinition : SchemeDefinition
     public override double CostExponent => 5;
 
     /// <inheritdoc/>
-    public override TruncationLaw TruncationLaw => new(1, 1.5);
+    public override TruncationLaw TruncationLaw => new(1, 1.2, 5e-4);
 
     /// <inheritdoc/>
     public override IScheme<T> Create<T>(TensorAlgebra<T> algebra, SchemeSettings settings)

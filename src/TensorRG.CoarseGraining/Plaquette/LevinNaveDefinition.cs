@@ -18,7 +18,7 @@ internal sealed class LevinNaveDefinition : SchemeDefinition
     public override double CostExponent => 5;
 
     /// <inheritdoc/>
-    public override TruncationLaw TruncationLaw => new(1, 1);
+    public override TruncationLaw TruncationLaw => new(1, 1.2, 1e-4);
 
     /// <inheritdoc/>
     public override IScheme<T> Create<T>(TensorAlgebra<T> algebra, SchemeSettings settings)

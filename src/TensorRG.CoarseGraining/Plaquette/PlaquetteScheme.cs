@@ -45,9 +45,8 @@ internal sealed class PlaquetteScheme<T>(TensorAlgebra<T> algebra, SchemeSetting
         if (FormsTensor(state))
         {
             using Tensor<T> tensor = Whole(state);
-            using Tensor<T> turned = tensor.Permute(1, 2, 3, 0);
-            first = Decompose(tensor, step, 0);
-            second = Decompose(turned, step, 1);
+            first = Decompose(tensor, [0, 1], [2, 3], step, 0);
+            second = Decompose(tensor, [1, 2], [3, 0], step, 1);
         }
         else
         {
@@ -90,12 +89,7 @@ internal sealed class PlaquetteScheme<T>(TensorAlgebra<T> algebra, SchemeSetting
     public double AspectRatio(int step) => 1;
 
     private bool FormsTensor(NetworkState<T> state)
-        => state.Tensors.ContainsKey(Site) || settings.Decomposition switch
-        {
-            DecompositionMode.Full => true,
-            DecompositionMode.Iterative => false,
-            _ => PlaquetteCost.PrefersTensor(state[NorthWest], state[NorthEast], settings.Cut.MaxDimension),
-        };
+        => state.Tensors.ContainsKey(Site) || settings.Decomposition == DecompositionMode.Full;
 
     /// <summary>T[l, u, r, d].</summary>
     private Tensor<T> Whole(NetworkState<T> state)
@@ -111,15 +105,23 @@ internal sealed class PlaquetteScheme<T>(TensorAlgebra<T> algebra, SchemeSetting
 
     private TruncatedSvd<T> Decompose(NetworkState<T> state, ReadOnlySpan<string> names, int step, int index)
     {
-        using RingMap<T> ring = Ring(state, names);
-        return _subspace.Compute(ring, settings.Cut, new RandomSequence(settings.Seed, step, index), Expected(ring));
+        Tensor<T> a = state[names[0]], b = state[names[1]], c = state[names[2]], d = state[names[3]];
+        var random = new RandomSequence(settings.Seed, step, index);
+        if (settings.Decomposition == DecompositionMode.Iterative || !PairSize.Fits(a, b, c, d))
+        {
+            using var ring = new RingMap<T>(algebra, a, b, c, d);
+            return _subspace.Compute(ring, settings.Cut, random, Expected(ring));
+        }
+
+        using var pairs = new RingPairs<T>(algebra, a, b, c, d);
+        return _subspace.Compute(pairs.Map, settings.Cut, random, Expected(pairs.Map));
     }
 
-    private TruncatedSvd<T> Decompose(Tensor<T> tensor, int step, int index)
+    private TruncatedSvd<T> Decompose(Tensor<T> tensor, ReadOnlySpan<int> rows, ReadOnlySpan<int> columns, int step, int index)
     {
         if (settings.Decomposition == DecompositionMode.Full)
-            return DenseSvd.Compute(algebra.Kernels, tensor, [0, 1], [2, 3], settings.Cut);
-        using var map = new TensorMap<T>(algebra, tensor);
+            return DenseSvd.Compute(algebra.Kernels, tensor, rows, columns, settings.Cut);
+        using var map = new TensorMap<T>(algebra.Kernels, tensor, rows, columns);
         return _subspace.Compute(map, settings.Cut, new RandomSequence(settings.Seed, step, index), Expected(map));
     }
 

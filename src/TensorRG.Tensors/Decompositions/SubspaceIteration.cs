@@ -56,7 +56,7 @@ internal sealed class SubspaceIteration<T>
             int share = expected is not null && expected.TryGetValue(charge, out int known)
                 ? known
                 : (int)Math.Ceiling(_rule.MaxDimension * (limit / total));
-            _sizes[charge] = Math.Min(limit, share + _options.Oversampling);
+            _sizes[charge] = BlockSize(charge, share);
         }
     }
 
@@ -157,15 +157,21 @@ internal sealed class SubspaceIteration<T>
         foreach ((Charge charge, int count) in counts)
         {
             _kept.Add(charge, count);
-            int wanted = Math.Min(_limits[charge], count + _options.Oversampling);
             if (_sizes[charge] < Math.Min(_limits[charge], count + _options.Margin))
-                missing.Add(charge, wanted - _sizes[charge]);
+                missing.Add(charge, BlockSize(charge, count) - _sizes[charge]);
         }
 
         if (missing.Count == 0)
             return false;
         Extend(missing);
         return true;
+    }
+
+    /// <summary>Vectors for a sector that keeps a number of them: a multiple of four, which the kernels like.</summary>
+    private int BlockSize(Charge charge, int kept)
+    {
+        int extra = Math.Max(_options.MinOversampling, (_options.Oversampling + _limits.Count - 1) / _limits.Count);
+        return Math.Min(_limits[charge], (kept + extra + 3) / 4 * 4);
     }
 
     private void Extend(SortedDictionary<Charge, int> missing)

@@ -3,8 +3,11 @@ namespace TensorRG.Tensors.Decompositions;
 /// <summary>Settings of the block subspace iteration; the defaults are what the schemes use.</summary>
 public sealed record SubspaceOptions
 {
-    /// <summary>Vectors iterated beyond those expected to be kept, in each sector.</summary>
+    /// <summary>Vectors iterated beyond those expected to be kept, shared out over the sectors.</summary>
     public int Oversampling { get; init; } = 20;
+
+    /// <summary>Fewest such vectors in a sector.</summary>
+    public int MinOversampling { get; init; } = 8;
 
     /// <summary>Fewest power steps (one application of M^H and one of M each).</summary>
     public int MinPowerSteps { get; init; } = 2;
@@ -12,11 +15,14 @@ public sealed record SubspaceOptions
     /// <summary>Most power steps before falling through to a full decomposition.</summary>
     public int MaxPowerSteps { get; init; } = 8;
 
-    /// <summary>Stop when no kept singular value changes by more than this fraction over half a power step.</summary>
-    public double Tolerance { get; init; } = 1e-9;
+    /// <summary>
+    /// Stop when no kept singular value changes by more than this fraction over half a power step. Each half step divides the error
+    /// by the fourth power of the ratio of a value to the first one outside the block, so what is left is far smaller.
+    /// </summary>
+    public double Tolerance { get; init; } = 1e-8;
 
     /// <summary>A kept value this close, in vectors, to the end of its sector's block makes the block grow.</summary>
-    public int Margin { get; init; } = 8;
+    public int Margin { get; init; } = 4;
 
     /// <summary>Fraction of a sector's dimension above which the block is no cheaper than a full decomposition.</summary>
     public double DenseFraction { get; init; } = 0.5;

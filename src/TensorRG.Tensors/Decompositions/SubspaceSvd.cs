@@ -33,6 +33,8 @@ public sealed class SubspaceSvd<T>(TensorAlgebra<T> algebra, SubspaceOptions opt
 
     private TruncatedSvd<T> Dense(ILinearMap<T> map, CutRule rule)
     {
+        if (map is TensorMap<T> explicitly)
+            return explicitly.Decompose(rule);
         using Tensor<T> tensor = map.ToTensor();
         int rows = map.RowLegs.Length;
         return DenseSvd.Compute(

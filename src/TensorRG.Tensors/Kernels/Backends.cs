@@ -42,7 +42,12 @@ public static class Backends
     }
 
     /// <summary>Every backend with its state on this machine, in the order of <see cref="Names"/>.</summary>
-    public static IReadOnlyList<BackendStatus> Available() => [.. Names.Select(Probe)];
+    public static IReadOnlyList<BackendStatus> Available()
+    {
+        // Looking must not change what Math.NET runs on.
+        using (MathNetProvider.KeepSettings())
+            return [.. Names.Select(Probe)];
+    }
 
     private static BackendStatus Probe(string name)
     {

@@ -4,7 +4,7 @@ using System.Numerics;
 namespace TensorRG.Tensors.Kernels;
 
 /// <summary>
-/// Pinned blocks kept for reuse by size class (powers of two, and halves between). Fresh large arrays cost page faults that amount to a
+/// Pinned blocks kept for reuse by size class (eighths of a power of two). Fresh large arrays cost page faults that amount to a
 /// quarter of a medium matrix product; the pool removes them. Thread-safe.
 /// </summary>
 public static class BufferPool
@@ -60,8 +60,8 @@ public static class BufferPool
     {
         if (bytes > Array.MaxLength)
             throw new InsufficientMemoryException($"A tensor block of {bytes} bytes exceeds the {Array.MaxLength} bytes one array can hold; lower the bond dimension.");
-        long power = (long)BitOperations.RoundUpToPowerOf2((ulong)Math.Max(bytes, 1024));
-        long half = power / 4 * 3;
-        return (int)Math.Min(bytes <= half ? half : power, Array.MaxLength);
+        // Eighths of a power of two: at most an eighth of a block lies idle.
+        long grain = Math.Max(1024, (long)BitOperations.RoundUpToPowerOf2((ulong)bytes) / 16);
+        return (int)Math.Min((bytes + grain - 1) / grain * grain, Array.MaxLength);
     }
 }

@@ -25,7 +25,6 @@ internal unsafe struct GemmDriver<T, TKernel>
     private const int SmallSize = 4096;
     private const int ManyColumns = 288;
 
-    private readonly GemmScratch _scratch;
     private readonly MatrixView<T> _c;
     private readonly bool _wide;
     private TileCall _call;
@@ -35,7 +34,6 @@ internal unsafe struct GemmDriver<T, TKernel>
 
     private GemmDriver(in MatrixView<T> c, bool conjugateA, bool conjugateB)
     {
-        _scratch = GemmScratch.Current;
         _c = c;
         _wide = c.Rows * Reals <= 2;
         _end = new TileEnd(conjugateA, conjugateB);
@@ -62,6 +60,12 @@ internal unsafe struct GemmDriver<T, TKernel>
     /// <summary>C = A B or C += A B; no dimension is 0.</summary>
     internal static void Multiply(in MatrixView<T> a, in MatrixView<T> b, in MatrixView<T> c, bool accumulate)
     {
+        if (IsSimple(a, b, c))
+        {
+            MultiplySimple(a, b, c, accumulate);
+            return;
+        }
+
         var driver = new GemmDriver<T, TKernel>(c, a.Conjugated, b.Conjugated);
         int k = a.Columns;
         if (k <= MaxDepth)
@@ -76,6 +80,40 @@ internal unsafe struct GemmDriver<T, TKernel>
         {
             int size = Math.Min(depth, k - start);
             driver.Slab(a.Slice(0, start, a.Rows, size), b.Slice(start, 0, size, b.Columns), accumulate || start > 0);
+        }
+    }
+
+    /// <summary>Whether whole vectors can go from B to C without any packing: the bulk of the many small products.</summary>
+    [MethodImpl(MethodImplOptions.AggressiveInlining)]
+    private static bool IsSimple(in MatrixView<T> a, in MatrixView<T> b, in MatrixView<T> c)
+        => Reals == 1 && b.ColumnStride == 1 && c.ColumnStride == 1 && b.Columns % TKernel.Lanes == 0
+            && a.Rows > 2 && a.Columns <= MaxDepth
+            && (long)a.Rows * a.Columns <= SmallSize && (long)b.Rows * b.Columns <= SmallSize;
+
+    /// <summary>The loop over tiles alone, with the least possible work around it.</summary>
+    [MethodImpl(MethodImplOptions.AggressiveOptimization)]
+    private static void MultiplySimple(in MatrixView<T> a, in MatrixView<T> b, in MatrixView<T> c, bool accumulate)
+    {
+        TileCall call;
+        call.Depth = a.Columns;
+        call.APair = 2 * a.RowStride;
+        call.AOdd = a.RowStride;
+        call.AStep = a.ColumnStride;
+        call.BStep = b.RowStride;
+        call.CRow = c.RowStride;
+        call.Accumulate = accumulate;
+        var tiles = new RowTiles(a.Rows, TKernel.Rows);
+        for (int j = 0; j < b.Columns; j += TileColumns)
+        {
+            int vectors = Math.Min(TileColumns, b.Columns - j) / TKernel.Lanes;
+            double* left = (double*)a.Data, to = (double*)(c.Data + j);
+            for (int t = 0; t < tiles.Count; t++)
+            {
+                int size = t < tiles.Larger ? tiles.Size + 1 : tiles.Size;
+                TKernel.Run(size, vectors, call, left, (double*)(b.Data + j), to);
+                left += size * a.RowStride;
+                to += size * c.RowStride;
+            }
         }
     }
 
@@ -125,11 +163,11 @@ internal unsafe struct GemmDriver<T, TKernel>
         }
     }
 
-    private double* PackB(in MatrixView<T> b, int firstColumn, int columns)
+    private static double* PackB(in MatrixView<T> b, int firstColumn, int columns)
     {
         nint panel = (nint)TileColumns * b.Rows;
         int panels = (columns + TileColumns - 1) / TileColumns;
-        T* packed = (T*)_scratch.Right(panel * panels * Reals);
+        T* packed = (T*)GemmScratch.Current.Right(panel * panels * Reals);
         T* target = packed;
         for (int j = 0; j < columns; j += TileColumns, target += panel)
             PackPanel(b, firstColumn + j, Math.Min(TileColumns, columns - j), target);
@@ -146,11 +184,11 @@ internal unsafe struct GemmDriver<T, TKernel>
             PanelCopy.RunPadded(source, b.RowStride, b.ColumnStride, b.Rows, columns, target, TileColumns);
     }
 
-    private double* PackA(in MatrixView<T> a, int firstRow, int rows)
+    private static double* PackA(in MatrixView<T> a, int firstRow, int rows)
     {
         nint panel = (nint)TileRows * a.Columns;
         var tiles = new RowTiles(rows, TileRows);
-        T* packed = (T*)_scratch.Left(panel * tiles.Count * Reals);
+        T* packed = (T*)GemmScratch.Current.Left(panel * tiles.Count * Reals);
         T* target = packed;
         T* source = a.Data + (firstRow * a.RowStride);
         for (int tile = 0; tile < tiles.Count; tile++, target += panel)
@@ -190,7 +228,7 @@ internal unsafe struct GemmDriver<T, TKernel>
             else
             {
                 // The last vector would read past the row: a padded copy.
-                right = _scratch.Right((long)TileColumns * a.Columns * Reals);
+                right = GemmScratch.Current.Right((long)TileColumns * a.Columns * Reals);
                 PackPanel(b, firstColumn + j, size, (T*)right);
             }
 
@@ -222,7 +260,7 @@ internal unsafe struct GemmDriver<T, TKernel>
         in RowTiles tiles, double* left, nint leftStep, nint leftTile, double* right, T* c, int columns)
     {
         int vectors = ((columns * Reals) + TKernel.Lanes - 1) / TKernel.Lanes;
-        double* tile = _scratch.Tile;
+        double* tile = GemmScratch.Current.Tile;
         TileCall aside = _call;
         aside.CRow = vectors * TKernel.Lanes;
         aside.Accumulate = false;

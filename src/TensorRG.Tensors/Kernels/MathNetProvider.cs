@@ -32,4 +32,19 @@ internal static class MathNetProvider
 
     private static Backend Wrap(string name, string description)
         => new(name, description, new MathNetKernels<double>(), new MathNetKernels<Complex>());
+
+    /// <summary>Restores Math.NET's provider and number of threads on disposal.</summary>
+    public static IDisposable KeepSettings() => new Settings();
+
+    private sealed class Settings : IDisposable
+    {
+        private readonly ILinearAlgebraProvider _provider = LinearAlgebraControl.Provider;
+        private readonly int _threads = Control.MaxDegreeOfParallelism;
+
+        public void Dispose()
+        {
+            LinearAlgebraControl.Provider = _provider;
+            Control.MaxDegreeOfParallelism = _threads;
+        }
+    }
 }

@@ -62,6 +62,9 @@ public readonly unsafe struct MatrixView<T>(
     /// <summary>The conjugate transpose, as a view on the same memory.</summary>
     public MatrixView<T> Adjoint => new(Data, Columns, Rows, ColumnStride, RowStride, !Conjugated);
 
+    /// <summary>The complex conjugate, as a view on the same memory.</summary>
+    public MatrixView<T> Conjugate => new(Data, Rows, Columns, RowStride, ColumnStride, !Conjugated);
+
     /// <summary>The element (i, j) as a reader sees it: conjugated where the view says so.</summary>
     /// <param name="i">Row, from 0.</param>
     /// <param name="j">Column, from 0.</param>

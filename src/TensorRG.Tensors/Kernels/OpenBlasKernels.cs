@@ -65,9 +65,11 @@ internal sealed unsafe class OpenBlasKernels<T> : IKernels<T>
         int m = a.Rows, n = a.Columns, info = 0, none = -1;
         if (n == 0)
             return;
-        Entry.FiniteLargestPart(a, "Thin QR");
         _library.UseThreads(_threads);
-        using AlignedBuffer<T> buffer = Columns(a, out MatrixView<T> q), tau = BufferPool.Rent<T>(n);
+        using AlignedBuffer<T> buffer = BufferPool.Rent<T>((long)m * n), tau = BufferPool.Rent<T>(n);
+        using AlignedBuffer<int> scales = BufferPool.Rent<int>(n);
+        var q = new MatrixView<T>(buffer.Data, m, n, 1, m);
+        ThinQr.Load(a, q, scales.Data);
         T size = T.Zero;
         _geqrf(&m, &n, q.Data, &m, tau.Data, &size, &none, &info);
         T generate = T.Zero;
@@ -78,6 +80,7 @@ internal sealed unsafe class OpenBlasKernels<T> : IKernels<T>
         HouseholderQr.TakeR(q, r);
         _orgqr(&m, &n, &n, q.Data, &m, tau.Data, work.Data, &length, &info);
         HouseholderQr.MakeDiagonalPositive(q, r);
+        ThinQr.Unscale(r, scales.Data);
         Entry.CopyScaled(q, a, 0);
     }
 

@@ -30,6 +30,7 @@ public sealed unsafe class PlainKernels<T> : IKernels<T>
     /// <inheritdoc/>
     public void OrthogonalFactor(MatrixView<T> a, MatrixView<T> r)
     {
+        RequireFinite(a, "Thin QR");
         for (int j = 0; j < a.Columns; j++)
         {
             for (int i = 0; i < r.Rows; i++)
@@ -50,6 +51,7 @@ public sealed unsafe class PlainKernels<T> : IKernels<T>
     /// <inheritdoc/>
     public void HermitianEigen(MatrixView<T> a, Span<double> values, MatrixView<T> vectors)
     {
+        RequireFinite(a, "Eigenproblem");
         int n = a.Rows;
         T[] work = new T[n * n];
         fixed (T* p = work)
@@ -82,6 +84,7 @@ public sealed unsafe class PlainKernels<T> : IKernels<T>
             return;
         }
 
+        RequireFinite(a, "Singular values");
         for (int i = 0; i < a.Rows; i++)
         {
             for (int j = 0; j < a.Columns; j++)
@@ -98,13 +101,25 @@ public sealed unsafe class PlainKernels<T> : IKernels<T>
         for (int j = 0; j < a.Columns; j++)
             s[j] = Norm(u, j);
         SortDescending(s, u, v);
-        double floor = s.Length == 0 ? 0 : s[0] * 1e-300;
+        double floor = s.Length == 0 ? 0 : Math.Max(s[0] * 1e-300, 1e-145);
         for (int j = 0; j < a.Columns; j++)
         {
             if (s[j] > floor)
                 Scale(u, j, 1 / s[j]);
             else
                 Complete(u, j);
+        }
+    }
+
+    private static void RequireFinite(MatrixView<T> a, string task)
+    {
+        for (int i = 0; i < a.Rows; i++)
+        {
+            for (int j = 0; j < a.Columns; j++)
+            {
+                if (!T.IsFinite(a[i, j]))
+                    throw new DecompositionException($"{task} of {a.Rows} x {a.Columns}: the matrix holds NaN or infinity.");
+            }
         }
     }
 
@@ -146,6 +161,10 @@ public sealed unsafe class PlainKernels<T> : IKernels<T>
             RotatePair(ref m[i, p], ref m[i, q], c, s);
         for (int i = 0; i < m.Rows; i++)
             RotatePair(ref m[p, i], ref m[q, i], c, Scalar.Conjugate(s));
+
+        // Zero by construction; the rounding left here would keep the sweeps from ending.
+        m[p, q] = T.Zero;
+        m[q, p] = T.Zero;
         for (int i = 0; i < v.Rows; i++)
             RotatePair(ref v[i, p], ref v[i, q], c, s);
     }
@@ -182,7 +201,8 @@ public sealed unsafe class PlainKernels<T> : IKernels<T>
 
         if (!double.IsFinite(alpha + beta))
             throw new DecompositionException($"Singular values of {u.Rows} x {u.Columns}: NaN or infinity in the matrix.");
-        if (Scalar.Magnitude(gamma) <= 1e-15 * Math.Sqrt(alpha * beta))
+        // A column whose square has lost its digits counts as zero: rotating it further never ends.
+        if (Math.Min(alpha, beta) < 1e-290 || Scalar.Magnitude(gamma) <= 1e-15 * Math.Sqrt(alpha * beta))
             return false;
         if (!Rotation(alpha, beta, gamma, out double c, out T s))
             return false;

@@ -1,3 +1,5 @@
+using System.Runtime.CompilerServices;
+
 namespace TensorRG.Tensors.Kernels.Decompositions;
 
 /// <summary>
@@ -13,22 +15,26 @@ internal ref struct BidiagonalQr(Span<double> d, Span<double> e, RotationBatch l
 {
     private const int MaxSweepsEach = 60;
 
+    /// <summary>Sweeps without progress after which the deflation floor doubles.</summary>
+    private const int Patience = 6;
+
     private readonly Span<double> _d = d;
     private readonly Span<double> _e = e;
     private double _floor;
 
     /// <summary>Iterates to convergence. The matrix should have its largest element near one.</summary>
-    /// <exception cref="DecompositionException">More than 60 sweeps per value on average.</exception>
+    /// <exception cref="DecompositionException">60 sweeps passed without one value found.</exception>
     public void Solve()
     {
         int n = _d.Length;
-        _floor = DeflationFloor();
+        double floor = DeflationFloor();
         int high = n - 1, oldLow = -1, oldHigh = -1;
         bool down = true;
-        for (int sweeps = 0; high > 0; sweeps++)
+        int sweeps = 0;
+        while (high > 0)
         {
-            if (sweeps > MaxSweepsEach * n)
-                throw new DecompositionException($"Singular values of size {n}: {sweeps} sweeps did not converge.");
+            // Equal values to round-off never fall below half an ulp: their superdiagonal is the rounding of the sweeps.
+            _floor = Math.ScaleB(floor, sweeps / Patience);
             int low = BlockStart(high);
             if (low == high)
             {
@@ -38,12 +44,15 @@ internal ref struct BidiagonalQr(Span<double> d, Span<double> e, RotationBatch l
 
             if (low >= oldHigh || high <= oldLow || oldHigh < 0)
                 down = Math.Abs(_d[low]) >= Math.Abs(_d[high]);
+            sweeps = (low, high) == (oldLow, oldHigh) ? sweeps + 1 : 0;
+            if (sweeps > MaxSweepsEach)
+                throw new DecompositionException($"Singular values of size {n}: {MaxSweepsEach} sweeps found no further value.");
             (oldLow, oldHigh) = (low, high);
             Sweep(low, high, down);
         }
 
-        left.Flush();
-        right.Flush();
+        left.Finish();
+        right.Finish();
     }
 
     private readonly double DeflationFloor()
@@ -51,10 +60,11 @@ internal ref struct BidiagonalQr(Span<double> d, Span<double> e, RotationBatch l
         double norm = 0;
         for (int i = 0; i < _d.Length; i++)
             norm = Math.Max(norm, Math.Abs(_d[i]) + (i < _d.Length - 1 ? Math.Abs(_e[i]) : 0));
-        return norm * Math.ScaleB(1, -53);
+        return norm * Math.ScaleB(1, -52);
     }
 
     /// <summary>First row of the unreduced block that ends at row high; negligible elements become zero on the way.</summary>
+    [MethodImpl(MethodImplOptions.AggressiveOptimization)]
     private readonly int BlockStart(int high)
     {
         for (int i = high; ; i--)
@@ -100,6 +110,7 @@ internal ref struct BidiagonalQr(Span<double> d, Span<double> e, RotationBatch l
         return ratio * ratio < Math.ScaleB(1, -52) ? 0 : shift;
     }
 
+    [MethodImpl(MethodImplOptions.AggressiveOptimization)]
     private readonly void ZeroShiftDown(int low, int high, Span<double> u, Span<double> v)
     {
         double c = 1, oldC = 1, oldS = 0;
@@ -118,6 +129,7 @@ internal ref struct BidiagonalQr(Span<double> d, Span<double> e, RotationBatch l
         _e[high - 1] = last * oldS;
     }
 
+    [MethodImpl(MethodImplOptions.AggressiveOptimization)]
     private readonly void ZeroShiftUp(int low, int high, Span<double> u, Span<double> v)
     {
         double c = 1, oldC = 1, oldS = 0;
@@ -136,6 +148,7 @@ internal ref struct BidiagonalQr(Span<double> d, Span<double> e, RotationBatch l
         _e[low] = last * oldS;
     }
 
+    [MethodImpl(MethodImplOptions.AggressiveOptimization)]
     private readonly void ShiftedDown(int low, int high, double shift, Span<double> u, Span<double> v)
     {
         double f = (Math.Abs(_d[low]) - shift) * (Math.CopySign(1, _d[low]) + (shift / _d[low])), g = _e[low];
@@ -162,6 +175,7 @@ internal ref struct BidiagonalQr(Span<double> d, Span<double> e, RotationBatch l
         _e[high - 1] = f;
     }
 
+    [MethodImpl(MethodImplOptions.AggressiveOptimization)]
     private readonly void ShiftedUp(int low, int high, double shift, Span<double> u, Span<double> v)
     {
         double f = (Math.Abs(_d[high]) - shift) * (Math.CopySign(1, _d[high]) + (shift / _d[high])), g = _e[high - 1];

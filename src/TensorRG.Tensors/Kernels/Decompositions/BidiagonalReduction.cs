@@ -90,7 +90,7 @@ internal sealed unsafe class BidiagonalReduction<T> : IDisposable
         new Span<T>(column, length).CopyTo(new Span<T>(v, length));
         double beta = Reflector.Generate(v, length, out _leftTau[j]);
         T* y = At(_y, j + 1, done);
-        Panels.AdjointTimes(column + _a.ColumnStride, _a.ColumnStride, length, after, v, y);
+        Panels.AdjointTimes(_kernels.Workers, column + _a.ColumnStride, _a.ColumnStride, length, after, v, y);
         ProjectOut(At(_v, j, first), length, v, At(_y, j + 1, 0), after, done, y);
         ProjectOut(At(_x, j, 0), length, v, At(_u, j + 1, first), after, done, y);
         VectorOps.Scale(_leftTau[j], y, after);
@@ -113,7 +113,7 @@ internal sealed unsafe class BidiagonalReduction<T> : IDisposable
         new Span<T>(_row, after).CopyTo(new Span<T>(u, after));
         double beta = Reflector.Generate(u, after, out _rightTau[j]);
         T* x = At(_x, j + 1, done);
-        Panels.AddTimes(At(_a, j + 1, j + 1), _a.ColumnStride, after, after, u, x);
+        Panels.AddTimes(_kernels.Workers, At(_a, j + 1, j + 1), _a.ColumnStride, after, after, u, x);
         ProjectOut(At(_y, j + 1, 0), after, u, At(_v, j + 1, first), after, done + 1, x);
         ProjectOut(At(_u, j + 1, first), after, u, At(_x, j + 1, 0), after, done, x);
         VectorOps.Scale(_rightTau[j], x, after);

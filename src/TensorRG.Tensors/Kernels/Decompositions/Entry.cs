@@ -20,8 +20,15 @@ internal static unsafe class Entry
         double largest = 0;
         for (int j = 0; j < a.Columns; j++)
         {
+            T* column = a.Data + (j * a.ColumnStride);
+            if (a.RowStride == 1)
+            {
+                largest = Math.Max(largest, VectorOps.MaxAbs(column, a.Rows));
+                continue;
+            }
+
             for (int i = 0; i < a.Rows; i++)
-                largest = LargerPart(a[i, j], largest);
+                largest = Math.Max(largest, VectorOps.MaxAbs(column + (i * a.RowStride), 1));
         }
 
         return largest;
@@ -40,30 +47,36 @@ internal static unsafe class Entry
     /// <summary>The exponent e for which 2^-e brings a largest part near one; zero for a zero matrix.</summary>
     public static int Exponent(double largest) => largest == 0 ? 0 : Math.Clamp(Math.ILogB(largest), -1020, 1020);
 
-    /// <summary>Copies 2^-exponent A, as a reader sees it, to another view.</summary>
+    /// <summary>Copies 2^-exponent A, as a reader sees it, to another view that does not overlap.</summary>
     public static void CopyScaled<T>(MatrixView<T> from, MatrixView<T> to, int exponent)
         where T : unmanaged, INumberBase<T>
     {
-        if (Math.Abs(to.RowStride) > Math.Abs(to.ColumnStride))
-        {
-            from = from.Transposed;
-            to = to.Transposed;
-        }
-
-        T factor = Scalar.FromReal<T>(Math.ScaleB(1, -exponent));
-        for (int j = 0; j < to.Columns; j++)
-        {
-            for (int i = 0; i < to.Rows; i++)
-                to[i, j] = from.Read(i, j) * factor;
-        }
+        if (to.Rows == 0 || to.Columns == 0)
+            return;
+        StridedCopy.Run(
+            [to.Rows, to.Columns], from.Data, [from.RowStride, from.ColumnStride], to.Data, [to.RowStride, to.ColumnStride], from.Conjugated);
+        if (exponent != 0)
+            Scale(to, exponent);
     }
 
-    private static double LargerPart<T>(T value, double largest)
+    /// <summary>A := 2^-exponent A.</summary>
+    public static void Scale<T>(MatrixView<T> a, int exponent)
         where T : unmanaged, INumberBase<T>
     {
-        if (typeof(T) == typeof(double))
-            return Math.Max(largest, Math.Abs((double)(object)value));
-        var z = (Complex)(object)value;
-        return Math.Max(largest, Math.Max(Math.Abs(z.Real), Math.Abs(z.Imaginary)));
+        if (Math.Abs(a.RowStride) > Math.Abs(a.ColumnStride))
+            a = a.Transposed;
+        double factor = Math.ScaleB(1, -exponent);
+        for (int j = 0; j < a.Columns; j++)
+        {
+            T* column = a.Data + (j * a.ColumnStride);
+            if (a.RowStride == 1)
+            {
+                VectorOps.ScaleReal(factor, column, a.Rows);
+                continue;
+            }
+
+            for (int i = 0; i < a.Rows; i++)
+                VectorOps.ScaleReal(factor, column + (i * a.RowStride), 1);
+        }
     }
 }

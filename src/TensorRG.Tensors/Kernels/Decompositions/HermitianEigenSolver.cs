@@ -29,7 +29,7 @@ internal static unsafe class HermitianEigenSolver
             e[..(n - 1)].Reverse();
         }
 
-        using var batch = new RotationBatch(n, reversed);
+        using var batch = new RotationBatch(kernels.Workers, n, reversed);
         TridiagonalQl.Solve(d, e, batch);
         Collect(batch, d, exponent, values, matrix);
         reduction.ApplyQ(matrix);

@@ -8,6 +8,10 @@ namespace TensorRG.Tensors.Kernels.Decompositions;
 /// </summary>
 internal static unsafe class HouseholderQr
 {
+    /// <summary>Columns reduced one by one before the rest is updated by matrix products.</summary>
+    private const int Panel = 16;
+
+    /// <summary>Reflectors applied together; wider than a panel, for the sake of the products.</summary>
     private const int Block = 32;
 
     /// <summary>
@@ -20,9 +24,9 @@ internal static unsafe class HouseholderQr
         using AlignedBuffer<T> reflectors = BufferPool.RentZeroed<T>((long)a.Rows * n);
         using AlignedBuffer<T> factors = BufferPool.Rent<T>(n);
         var v = new MatrixView<T>(reflectors.Data, a.Rows, n, 1, a.Rows);
-        for (int j = 0; j < n; j += Block)
+        for (int j = 0; j < n; j += Panel)
         {
-            int width = Math.Min(Block, n - j);
+            int width = Math.Min(Panel, n - j);
             FactorPanel(a, v, factors.Data, j, width);
             Reflector.ApplyBlock(
                 kernels,

@@ -114,7 +114,10 @@ internal static unsafe class JacobiSvd
         {
             T* column = x.Data + (order[k] * x.ColumnStride);
             s[k] = norms[order[k]];
-            new Span<T>(column + n, n).CopyTo(new Span<T>(u.Data + (k * u.ColumnStride), n));
+
+            // Hundreds of rotations stretch a unit vector by as many roundings: normalise.
+            double stretch = Math.Sqrt(VectorOps.SumOfSquares(column + n, n));
+            VectorOps.ScaledCopy(Scalar.FromReal<T>(1 / stretch), column + n, u.Data + (k * u.ColumnStride), n);
             T inverse = Scalar.FromReal<T>(s[k] > 0 ? 1 / s[k] : 0);
             for (int i = 0; i < n; i++)
                 v[pivots[i], k] = column[i] * inverse;

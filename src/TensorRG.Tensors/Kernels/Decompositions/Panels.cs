@@ -9,6 +9,70 @@ internal static unsafe class Panels
 {
     private const int Width = 4;
 
+    /// <summary>Elements from which a second thread is worth waking.</summary>
+    private const int ThreadingSize = 1 << 16;
+
+    /// <summary><see cref="AdjointTimes{T}(T*, nint, int, int, T*, T*)"/> on several threads, each with its own columns: the same bits.</summary>
+    public static void AdjointTimes<T>(Workers workers, T* a, nint ld, int rows, int columns, T* x, T* y)
+        where T : unmanaged, INumberBase<T>
+    {
+        int parts = Parts(workers, rows, columns);
+        if (parts == 1)
+        {
+            AdjointTimes(a, ld, rows, columns, x, y);
+            return;
+        }
+
+        workers.Run(parts, part =>
+        {
+            (int from, int to) = Share(columns, part, parts);
+            AdjointTimes(a + (from * ld), ld, rows, to - from, x, y + from);
+        });
+    }
+
+    /// <summary><see cref="AddTimes{T}(T*, nint, int, int, T*, T*)"/> on several threads, each with its own rows: the same bits.</summary>
+    public static void AddTimes<T>(Workers workers, T* a, nint ld, int rows, int columns, T* x, T* y)
+        where T : unmanaged, INumberBase<T>
+    {
+        int parts = Parts(workers, rows, columns);
+        if (parts == 1)
+        {
+            AddTimes(a, ld, rows, columns, x, y);
+            return;
+        }
+
+        workers.Run(parts, part =>
+        {
+            (int from, int to) = Share(rows, part, parts);
+            AddTimes(a + from, ld, to - from, columns, x, y + from);
+        });
+    }
+
+    /// <summary>
+    /// y += A x for a Hermitian A on several threads. Each strip of columns has sums of its own, added in order; the strips
+    /// follow from n alone, so the bits do not depend on the threads.
+    /// </summary>
+    public static void HermitianTimes<T>(Workers workers, T* a, nint ld, int n, T* x, T* y)
+        where T : unmanaged, INumberBase<T>
+    {
+        int strips = n < 192 ? 1 : n < 512 ? 2 : 4;
+        if (strips == 1)
+        {
+            HermitianTimes(a, ld, n, n, x, y);
+            return;
+        }
+
+        using AlignedBuffer<T> sums = BufferPool.RentZeroed<T>((long)strips * n);
+        T* partial = sums.Data;
+        workers.Run(strips, strip =>
+        {
+            int from = StripStart(n, strip, strips), to = StripStart(n, strip + 1, strips);
+            HermitianTimes(a + from + (from * ld), ld, n - from, to - from, x + from, partial + (strip * n) + from);
+        });
+        for (int strip = 0; strip < strips; strip++)
+            VectorOps.AddScaled(T.One, partial + (strip * n), y, n);
+    }
+
     /// <summary>y[j] = column_j^H x for every column.</summary>
     public static void AdjointTimes<T>(T* a, nint ld, int rows, int columns, T* x, T* y)
         where T : unmanaged, INumberBase<T>
@@ -39,24 +103,38 @@ internal static unsafe class Panels
             VectorOps.AddScaled(x[j], a + (j * ld), y, rows);
     }
 
-    /// <summary>y += A x for a Hermitian A of which the lower triangle is stored.</summary>
-    public static void HermitianTimes<T>(T* a, nint ld, int n, T* x, T* y)
+    /// <summary>
+    /// The part of y += A x, for a Hermitian A of which the lower triangle is stored, that the elements of the first
+    /// columns of the triangle give.
+    /// </summary>
+    private static void HermitianTimes<T>(T* a, nint ld, int n, int columns, T* x, T* y)
         where T : unmanaged, INumberBase<T>
     {
         int j = 0;
         if (typeof(T) == typeof(double))
         {
-            for (; j <= n - 4; j += 4)
+            for (; j <= columns - 4; j += 4)
                 FourSymmetricColumns((double*)(a + j + (j * ld)), ld, n - j, (double*)(x + j), (double*)(y + j));
         }
 
-        for (; j < n; j++)
+        for (; j < columns; j++)
         {
             T* column = a + j + (j * ld);
             y[j] += (Scalar.FromReal<T>(Scalar.RealPart(column[0])) * x[j]) + VectorOps.Dot(column + 1, x + j + 1, n - j - 1);
             VectorOps.AddScaled(x[j], column + 1, y + j + 1, n - j - 1);
         }
     }
+
+    private static int Parts(Workers workers, int rows, int columns)
+        => (long)rows * columns < ThreadingSize ? 1 : workers.Threads;
+
+    /// <summary>A share in multiples of four, so that the same elements meet in the same vectors.</summary>
+    private static (int From, int To) Share(int length, int part, int parts)
+        => (length * part / parts / 4 * 4, part == parts - 1 ? length : length * (part + 1) / parts / 4 * 4);
+
+    /// <summary>First column of a strip; strips of a triangle have about equal areas.</summary>
+    private static int StripStart(int n, int strip, int strips)
+        => strip == strips ? n : (int)(n * (1 - Math.Sqrt(1 - ((double)strip / strips)))) / 4 * 4;
 
     [MethodImpl(MethodImplOptions.AggressiveOptimization)]
     private static void FourDots(double* a, nint ld, int n, double* x, double* y)

@@ -41,10 +41,17 @@ internal static unsafe class Reflector
     public static void Apply<T>(T* v, T factor, T* c, nint ld, int rows, int columns)
         where T : unmanaged, INumberBase<T>
     {
-        for (int j = 0; j < columns; j++)
+        const int Chunk = 32;
+        T* overlaps = stackalloc T[Chunk];
+        for (int first = 0; first < columns; first += Chunk)
         {
-            T* column = c + (j * ld);
-            VectorOps.AddScaled(-(factor * VectorOps.Dot(v, column, rows)), v, column, rows);
+            int width = Math.Min(Chunk, columns - first);
+            T* block = c + (first * ld);
+
+            // The adjoint of what is wanted: (column^H v), so conjugate on use.
+            Panels.AdjointTimes(block, ld, rows, width, v, overlaps);
+            for (int j = 0; j < width; j++)
+                VectorOps.AddScaled(-(factor * Scalar.Conjugate(overlaps[j])), v, block + (j * ld), rows);
         }
     }
 

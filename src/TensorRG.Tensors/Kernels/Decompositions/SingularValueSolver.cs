@@ -8,8 +8,11 @@ namespace TensorRG.Tensors.Kernels.Decompositions;
 /// </summary>
 internal static unsafe class SingularValueSolver
 {
-    /// <summary>Up to this size Jacobi is used; beyond it bidiagonalisation is faster.</summary>
-    private const int LargestJacobi = 100;
+    /// <summary>
+    /// Up to this size Jacobi is used, for its high relative accuracy at the same cost; at 24 bidiagonalisation takes
+    /// three fifths of the time, at 100 a third.
+    /// </summary>
+    private const int LargestJacobi = 16;
 
     /// <summary>A = U diag(s) V^H; A is left unchanged.</summary>
     public static void Solve<T>(ManagedKernels<T> kernels, MatrixView<T> a, MatrixView<T> u, Span<double> s, MatrixView<T> v)
@@ -63,8 +66,8 @@ internal static unsafe class SingularValueSolver
         using var reduction = new BidiagonalReduction<T>(kernels, a);
         Span<double> d = bidiagonal.Span[..n], e = bidiagonal.Span[n..];
         reduction.Reduce(d, e);
-        using var left = new RotationBatch(n);
-        using var right = new RotationBatch(n);
+        using var left = new RotationBatch(kernels.Workers, n);
+        using var right = new RotationBatch(kernels.Workers, n);
         new BidiagonalQr(d, e, left, right).Solve();
         Collect(left, right, d, u, s, v);
         reduction.ApplyLeft(u);

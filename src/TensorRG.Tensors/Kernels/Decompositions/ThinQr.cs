@@ -42,7 +42,9 @@ internal static unsafe class ThinQr
         Unscale(r, scales.Data);
     }
 
-    private static void Load<T>(MatrixView<T> a, MatrixView<T> w, int* scales)
+    /// <summary>W := A with every column scaled by the power of two, 2^-scales[j], that brings its largest part near one.</summary>
+    /// <exception cref="DecompositionException">A holds a NaN or infinity.</exception>
+    public static void Load<T>(MatrixView<T> a, MatrixView<T> w, int* scales)
         where T : unmanaged, INumberBase<T>
     {
         Entry.CopyScaled(a, w, 0);
@@ -51,17 +53,18 @@ internal static unsafe class ThinQr
             MatrixView<T> column = w.Slice(0, j, a.Rows, 1);
             scales[j] = Entry.Exponent(Entry.FiniteLargestPart(column, "Thin QR"));
             if (scales[j] != 0)
-                Entry.CopyScaled(column, column, scales[j]);
+                Entry.Scale(column, scales[j]);
         }
     }
 
-    private static void Unscale<T>(MatrixView<T> r, int* scales)
+    /// <summary>Undoes <see cref="Load"/> on R.</summary>
+    public static void Unscale<T>(MatrixView<T> r, int* scales)
         where T : unmanaged, INumberBase<T>
     {
         for (int j = 0; j < r.Columns; j++)
         {
             if (scales[j] != 0)
-                Entry.CopyScaled(r.Slice(0, j, r.Rows, 1), r.Slice(0, j, r.Rows, 1), -scales[j]);
+                Entry.Scale(r.Slice(0, j, r.Rows, 1), -scales[j]);
         }
     }
 

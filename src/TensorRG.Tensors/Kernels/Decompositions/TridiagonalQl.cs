@@ -1,3 +1,5 @@
+using System.Runtime.CompilerServices;
+
 namespace TensorRG.Tensors.Kernels.Decompositions;
 
 /// <summary>
@@ -7,6 +9,9 @@ namespace TensorRG.Tensors.Kernels.Decompositions;
 internal static class TridiagonalQl
 {
     private const int MaxSweepsEach = 60;
+
+    /// <summary>Sweeps on one eigenvalue after which the deflation floor doubles.</summary>
+    private const int Patience = 6;
 
     /// <summary>
     /// Overwrites the diagonal d (n) with the eigenvalues, unordered, and destroys the off-diagonal e (n; e[n-1] unused).
@@ -21,8 +26,10 @@ internal static class TridiagonalQl
         {
             for (int sweep = 0; ; sweep++)
             {
+                // Equal eigenvalues to round-off may stay above half an ulp: there e is the rounding of the sweeps.
+                double negligible = Math.ScaleB(floor, sweep / Patience);
                 int high = low;
-                while (high < n - 1 && Math.Abs(e[high]) > floor)
+                while (high < n - 1 && Math.Abs(e[high]) > negligible)
                     high++;
                 if (high == low)
                     break;
@@ -32,7 +39,7 @@ internal static class TridiagonalQl
             }
         }
 
-        batch.Flush();
+        batch.Finish();
     }
 
     /// <summary>Half an ulp of the norm; a lower floor need not be reached in finite precision.</summary>
@@ -48,6 +55,7 @@ internal static class TridiagonalQl
         return norm * Math.ScaleB(1, -53);
     }
 
+    [MethodImpl(MethodImplOptions.AggressiveOptimization)]
     private static void Sweep(Span<double> d, Span<double> e, int low, int high, Span<double> rotations)
     {
         double g = (d[low + 1] - d[low]) / (2 * e[low]);

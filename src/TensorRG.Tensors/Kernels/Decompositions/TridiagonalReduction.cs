@@ -114,7 +114,7 @@ internal sealed unsafe class TridiagonalReduction<T> : IDisposable
         int top = j + 1;
         T* w = &_w.Data[top + (done * _w.ColumnStride)];
         T* oldV = &_v.Data[top + (first * _v.ColumnStride)], oldW = &_w.Data[top];
-        Panels.HermitianTimes(&_a.Data[top + (top * _a.ColumnStride)], _a.ColumnStride, length, v, w);
+        Panels.HermitianTimes(_kernels.Workers, &_a.Data[top + (top * _a.ColumnStride)], _a.ColumnStride, length, v, w);
         Panels.AdjointTimes(oldW, _w.ColumnStride, length, done, v, _small);
         Panels.AdjointTimes(oldV, _v.ColumnStride, length, done, v, _small + Block);
         VectorOps.Scale(-T.One, _small, done);
