@@ -28,6 +28,7 @@ public sealed partial class RegistryTests
             Assert.InRange(s.CostExponent, 4, 12);
             Assert.Contains(s.TruncationLaw.Power, new double[] { 1, 2 });
             Assert.InRange(s.TruncationLaw.Factor, 0.01, 100);
+            Assert.InRange(s.TruncationLaw.AmplitudeFactor, 0, 1);
         });
 
     [Theory]
@@ -47,8 +48,10 @@ public sealed partial class RegistryTests
     {
         StepRecord first = SchemeCase.Flow(SchemeRegistry.Default.Name, Sites.Ising(0.3), new SchemeSettings(new CutRule(4))).Records[0];
         StepRecord[] records = [.. Enumerable.Range(0, 4).Select(n => first with { Step = n, DiscardedWeight = Math.Pow(2, -n) })];
-        SchemeCase.Near(expected, new TruncationLaw(power, 1).Measure(records), 1e-15, "D");
-        Assert.Equal(0, new TruncationLaw(power, 1).Measure([first]));
+        SchemeCase.Near(expected, new TruncationLaw(power, 1, 0).Measure(records), 1e-15, "D");
+        Assert.Equal(0, new TruncationLaw(power, 1, 1).Bar([first]));
+        double amplitudes = Math.Sqrt(0.5) + (0.5 / 2) + (Math.Sqrt(0.125) / 4);
+        SchemeCase.Near((3 * expected) + (7 * amplitudes), new TruncationLaw(power, 3, 7).Bar(records), 1e-15, "bar");
     }
 
     [GeneratedRegex(@"\((19|20)\d\d\)")]

@@ -15,8 +15,9 @@ public sealed class FreeEnergyTests
         IReadOnlyList<StepRecord> records = SyntheticFlow.WithEstimates((double.NaN, 0), (2.5, 0), (2.01, w), (2.001, w), (2.0004, w));
         Estimate estimate = FreeEnergy.LogZPerSite(records, scheme, 3);
         Assert.Equal(2.0004, estimate.Value);
-        double measure = Math.Pow(w, scheme.TruncationLaw.Power) * ((1 / 2.0) + (1 / 4.0) + (1 / 8.0));
-        SyntheticFlow.Near(1, Part(estimate, "truncation") / (scheme.TruncationLaw.Factor * measure / 3), 1e-12);
+        TruncationLaw law = scheme.TruncationLaw;
+        double perVertex = ((law.Factor * Math.Pow(w, law.Power)) + (law.AmplitudeFactor * Math.Sqrt(w))) * ((1 / 2.0) + (1 / 4.0) + (1 / 8.0));
+        SyntheticFlow.Near(1, Part(estimate, "truncation") / (perVertex / 3), 1e-12);
         SyntheticFlow.Near(0.009, Part(estimate, "steps"), 1e-12);
         Assert.InRange(Part(estimate, "round-off"), 2e-16, 1e-14);
         SyntheticFlow.Near(estimate.Parts.Sum(static p => p.Value), estimate.Error, 1e-15);
