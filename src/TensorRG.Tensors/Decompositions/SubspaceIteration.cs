@@ -178,6 +178,8 @@ internal sealed class SubspaceIteration<T>
     {
         using Tensor<T> fresh = RandomBlock(missing);
         using Tensor<T> moved = _map.Apply(fresh);
+        using Tensor<T> sample = _sample!;
+        _sample = BlockJoin.Concatenate(sample, moved);
         using Tensor<T> joined = BlockJoin.Concatenate(_left!, moved);
         (Tensor<T> basis, BlockMatrix<T> unused) = GradedQr.Orthonormalize(_algebra.Kernels, joined);
         unused.Dispose();
