@@ -63,6 +63,24 @@ public sealed class SubspaceSvdTests
         Assert.Equal(first.Truncation, second.Truncation);
     }
 
+    /// <summary>Means and extremes over fixed seeds: each estimate scatters, their mean does not lean.</summary>
+    [Theory]
+    [InlineData("power 4")]
+    [InlineData("exponential")]
+    [InlineData("stretched exponential")]
+    public void The_estimate_of_the_discarded_weight_does_not_lean(string spectrum)
+    {
+        const int Seeds = 30;
+        var algebra = new TensorAlgebra<double>(Managed);
+        using Tensor<double> matrix = Matrix(algebra, spectrum, Balanced);
+        double exact = DenseSvd.Compute(algebra.Kernels, matrix, [0], [1], new CutRule(Chi)).Truncation.DiscardedWeight;
+        double[] ratios = [.. Enumerable.Range(0, Seeds).Select(seed => new SubspaceSvd<double>(algebra, new SubspaceOptions())
+            .Compute(new MatrixMap<double>(algebra, matrix), new CutRule(Chi), new RandomSequence(seed)).Truncation.DiscardedWeight / exact)];
+        Assert.InRange(ratios.Average(), 0.9, 1.1);
+        Assert.InRange(ratios.Min(), 0.5, 1);
+        Assert.InRange(ratios.Max(), 1, 2);
+    }
+
     [Fact]
     public void A_zero_matrix_is_refused()
     {
