@@ -1,5 +1,6 @@
 using System.CommandLine;
 using TensorRG.Cli.Commands;
+using TensorRG.Cli.Input;
 using TensorRG.CoarseGraining;
 using TensorRG.Models;
 using TensorRG.Runs;
@@ -15,9 +16,7 @@ internal static class Application
         ParseResult result = CreateRoot().Parse(args);
         if (result.Errors.Count > 0)
         {
-            foreach (string message in result.Errors.Select(static e => e.Message).Distinct())
-                Console.Error.WriteLine(message);
-            Console.Error.WriteLine($"See: tensorrg {CommandPath(result)}--help");
+            Console.Error.WriteLine(ParseFailure.Describe(result));
             return ExitCode.BadInput;
         }
 
@@ -37,9 +36,6 @@ internal static class Application
         root.Subcommands.Add(ModelsCommand.Create());
         return root;
     }
-
-    private static string CommandPath(ParseResult result)
-        => result.CommandResult.Command is RootCommand ? "" : result.CommandResult.Command.Name + " ";
 
     /// <summary>Turns what can go wrong into a message and an exit code.</summary>
     private static int Guard(Func<int> action)
@@ -67,6 +63,12 @@ internal static class Application
         catch (Exception e) when (e is IOException or UnauthorizedAccessException)
         {
             return Fail(e.Message + " Choose a folder that can be written, with space on its disk.", ExitCode.Failed);
+        }
+#pragma warning disable CA1031 // The last resort: a defect ends with a report and exit code 1, not with an abort.
+        catch (Exception e)
+#pragma warning restore CA1031
+        {
+            return Fail("Internal error, please report it with the command that led to it. What was stored is intact.\n" + e, ExitCode.Failed);
         }
     }
 

@@ -63,6 +63,10 @@ internal sealed class GuardedFiles : IRunFiles
         }
     }
 
+    /// <summary>Whether a failure comes from a full disk or quota.</summary>
+    public static bool IsDiskFull(Exception? cause) =>
+        cause is IOException && (cause.HResult & 0xFFFF) is NoSpace or QuotaExceeded or WindowsDiskFull;
+
     private static bool IsFileFailure(Exception cause) =>
         cause is IOException or UnauthorizedAccessException or NotSupportedException or System.Security.SecurityException;
 
@@ -71,7 +75,7 @@ internal sealed class GuardedFiles : IRunFiles
 
     private static string Remedy(Exception cause) => (cause, cause.HResult & 0xFFFF) switch
     {
-        (_, NoSpace or QuotaExceeded or WindowsDiskFull) =>
+        _ when IsDiskFull(cause) =>
             "The disk or quota is full: free some space and resume the run; the last checkpoint is intact.",
         (_, ReadOnlyFileSystem) => "The file system is read-only: make it writable, or use a folder elsewhere.",
         (UnauthorizedAccessException, _) => "Check the permissions of the folder, or use another one.",

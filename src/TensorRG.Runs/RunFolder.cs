@@ -96,9 +96,11 @@ public sealed class RunFolder
         if (files.FileExists(folder))
             throw NotARun($"'{folder}' is a file. Give a folder for the run.");
         files.CreateFolder(folder);
+
+        // Before the lock too, which would leave its file in a folder that is not ours.
+        RequireEmpty(files, folder);
         using IDisposable held = files.Lock(folder);
-        if (files.List(folder).FirstOrDefault(name => !RunFiles.IsFromCreation(name)) is { } found)
-            throw NotARun($"The folder '{folder}' is not empty (it holds '{found}'). Give a new or empty folder for the run.");
+        RequireEmpty(files, folder);
         files.DeleteLeftovers(folder);
         RunHeader header = new(inputs, RunHeader.Sort(labels));
         files.Replace(folder, RunFiles.Run, header.Write());
@@ -114,7 +116,12 @@ public sealed class RunFolder
             throw NotARun($"There is no folder '{folder}'. Check the path, or start a new run.");
         string file = System.IO.Path.Combine(folder, RunFiles.Run);
         if (!files.FileExists(file))
+        {
+            // A folder that may not be read looks empty; listing it says so.
+            _ = files.List(folder);
             throw NotARun($"The folder '{folder}' holds no run: it has no {RunFiles.Run}. Check the path, or start a new run.");
+        }
+
         return new RunFolder(files, folder, RunHeader.Read(file, files.Read(file)));
     }
 
@@ -133,6 +140,12 @@ public sealed class RunFolder
     }
 
     internal string FilePath(string name) => System.IO.Path.Combine(Path, name);
+
+    private static void RequireEmpty(IRunFiles files, string folder)
+    {
+        if (files.List(folder).FirstOrDefault(name => !RunFiles.IsFromCreation(name)) is { } found)
+            throw NotARun($"The folder '{folder}' is not empty (it holds '{found}'). Give a new or empty folder for the run.");
+    }
 
     private static GuardedFiles Disk() => new(new DiskFiles());
 

@@ -34,6 +34,9 @@ public sealed class RunStoreException : Exception
         Problem = problem;
     }
 
+    /// <summary>Whether the cause is a full disk or quota.</summary>
+    public bool IsDiskFull => GuardedFiles.IsDiskFull(InnerException);
+
     /// <summary>The kind of problem.</summary>
     public RunStoreProblem Problem { get; } = RunStoreProblem.Storage;
 }

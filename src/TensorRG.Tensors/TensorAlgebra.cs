@@ -71,6 +71,26 @@ public sealed class TensorAlgebra<T>(Backend backend)
         return result;
     }
 
+    /// <summary>
+    /// R[p, n, x] = sum over k, l of M[n, k, l] Y[p, k, l, x]: a sum over the middle legs of a block of vectors, without moving its elements.
+    /// </summary>
+    /// <param name="m">Three legs n, k, l.</param>
+    /// <param name="y">Four legs p, k, l, x; the middle two match those of <paramref name="m"/>.</param>
+    /// <exception cref="ArgumentException">The legs do not match, or the tensors have other ranks.</exception>
+    public Tensor<T> ContractMiddle(Tensor<T> m, Tensor<T> y)
+    {
+        CheckPairs(m, [1, 2], y, [1, 2]);
+        if (m.Rank != 3 || y.Rank != 4)
+            throw new ArgumentException("The middle contraction takes tensors of three and four legs.", nameof(m));
+        Charge flux = m.Legs[0].Group.Add(m.Flux, y.Flux);
+        Tensor<T> result = Tensor<T>.Allocate([y.Legs[0], m.Legs[0], y.Legs[3]], flux, clear: false);
+        for (int block = 0; block < result.Layout.Count; block++)
+            MiddleContraction.Fill(Kernels, m, y, result, block);
+        GC.KeepAlive(m);
+        GC.KeepAlive(y);
+        return result;
+    }
+
     /// <summary>Frobenius norm: the square root of the sum of |element|^2, safe against overflow and underflow.</summary>
     /// <param name="a">Any tensor.</param>
     public static double Norm(Tensor<T> a)

@@ -6,6 +6,7 @@ using TensorRG.Cli.Input;
 using TensorRG.Cli.Output;
 using TensorRG.Reports;
 using TensorRG.Runs;
+using TensorRG.Tensors.Kernels;
 
 namespace TensorRG.Cli.Commands;
 
@@ -18,9 +19,9 @@ internal static class ConvergeCommand
     {
         var command = new Command("converge", "Scan the bond dimension: how ln Z per site settles, its limit with error bar, table and plot.");
         var flow = new FlowOptions();
-        Option<int[]> bondDimensions = NumberOption.Ascending("--bond-dimensions", "Ascending bond dimensions. Default: 8,12,16,24,32.", DefaultBondDimensions, 1);
+        Option<int[]> bondDimensions = NumberOption.Ascending("--bond-dimensions", "Ascending bond dimensions. Default: 8,12,16,24,32.", DefaultBondDimensions, 1, FlowOptions.LargestBondDimension);
         bondDimensions.HelpName = "N,N,...";
-        Option<string> into = new("--into") { Description = "Folder for the table and the plot; runs go below it. Default: results/runs/ and a name made of the inputs.", HelpName = "DIR" };
+        Option<string> into = TextInput.Folder("--into", "Folder for the table and the plot; runs go below it. Default: results/runs/ and a name made of the inputs.");
         (Option<bool> json, Option<bool> quiet) = OutputOptions.Create();
         flow.AddTo(command);
         foreach (Option option in (Option[])[bondDimensions, into, json, quiet])
@@ -33,6 +34,7 @@ internal static class ConvergeCommand
     private static int Scan(FlowRequest request, int[] bondDimensions, string? into, OutputMode mode)
     {
         long start = Stopwatch.GetTimestamp();
+        Backend backend = BackendChoice.Create(request.Backend, request.Threads);
         using var signal = new StopSignal();
         var runs = new List<RunReport>();
         foreach (int bondDimension in bondDimensions)
@@ -40,7 +42,7 @@ internal static class ConvergeCommand
             RunInputs inputs = request.Inputs(bondDimension);
             string path = into is null ? RunLocation.For(inputs) : Path.Combine(into, FormattableString.Invariant($"chi{bondDimension}"));
             RunReport? report = RunExecutor.Execute(
-                RunFolder.OpenOrCreate(path, inputs, RunLabels.Now()), request.Threads, OutputOptions.Display(OutputMode.Quiet), signal.Token);
+                RunLocation.OpenOrCreate(path, inputs), backend, request.Threads, OutputOptions.Display(OutputMode.Quiet), signal.Token);
             if (report is null)
             {
                 Consoles.Error.WriteLine("Stopped. The same command goes on from here.");

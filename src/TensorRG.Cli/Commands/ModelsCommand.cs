@@ -1,6 +1,7 @@
 using System.CommandLine;
 using System.Text.Json.Nodes;
 using Spectre.Console;
+using TensorRG.Cli.Input;
 using TensorRG.Cli.Output;
 using TensorRG.Models;
 using TensorRG.Reports;
@@ -13,7 +14,7 @@ internal static class ModelsCommand
     public static Command Create()
     {
         var command = new Command("models", "List the models, or explain one: parameters, symmetry, exact references.");
-        var name = new Argument<string?>("name") { Description = "Name of a model.", Arity = ArgumentArity.ZeroOrOne };
+        Argument<string?> name = TextInput.Optional("name", "Name of a model.");
         Option<bool> json = new("--json") { Description = "Print one JSON object and nothing else." };
         command.Arguments.Add(name);
         command.Options.Add(json);

@@ -5,6 +5,7 @@ using TensorRG.Cli.Input;
 using TensorRG.Cli.Output;
 using TensorRG.Reports;
 using TensorRG.Runs;
+using TensorRG.Tensors.Kernels;
 
 namespace TensorRG.Cli.Commands;
 
@@ -19,30 +20,32 @@ internal static class RunCommand
         var flow = new FlowOptions();
         Option<int> bondDimension = NumberOption.Whole("--bond-dimension", "Most states kept on a bond (chi).", DefaultBondDimension, 1, FlowOptions.LargestBondDimension);
         bondDimension.Aliases.Add("-c");
-        Option<string> run = new("--run") { Description = "Folder of the run. Default: results/runs/ and a name made of the inputs.", HelpName = "DIR" };
+        Option<string> run = TextInput.Folder("--run", "Folder of the run. Default: results/runs/ and a name made of the inputs.");
         (Option<bool> json, Option<bool> quiet) = OutputOptions.Create();
         flow.AddTo(command);
         foreach (Option option in (Option[])[bondDimension, run, json, quiet])
             command.Options.Add(option);
         command.SetAction(result =>
         {
+            // Everything is checked before the folder is made.
+            OutputMode mode = OutputOptions.Read(result, json, quiet);
             FlowRequest request = flow.Read(result);
             RunInputs inputs = request.Inputs(result.GetRequiredValue(bondDimension));
+            Backend backend = BackendChoice.Create(request.Backend, request.Threads);
             string path = result.GetValue(run) ?? RunLocation.For(inputs);
-            RunFolder folder = RunFolder.OpenOrCreate(path, inputs, RunLabels.Now());
-            return Finish(folder, request.Threads, OutputOptions.Read(result, json, quiet));
+            return Finish(RunLocation.OpenOrCreate(path, inputs), backend, request.Threads, mode);
         });
         return command;
     }
 
     /// <summary>Runs a folder to its end and prints the result.</summary>
-    public static int Finish(RunFolder folder, int threads, OutputMode mode)
+    public static int Finish(RunFolder folder, Backend backend, int threads, OutputMode mode)
     {
         using var signal = new StopSignal();
-        RunReport? report = RunExecutor.Execute(folder, threads, OutputOptions.Display(mode), signal.Token);
+        RunReport? report = RunExecutor.Execute(folder, backend, threads, OutputOptions.Display(mode), signal.Token);
         if (report is null)
         {
-            Consoles.Error.WriteLine($"Stopped. Go on with: tensorrg resume {folder.Path}");
+            Consoles.Error.WriteLine($"Stopped. Go on with: tensorrg resume '{folder.Path}'");
             return ExitCode.Stopped;
         }
 

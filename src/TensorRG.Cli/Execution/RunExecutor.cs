@@ -13,16 +13,16 @@ internal static class RunExecutor
 {
     /// <summary>Runs to the end or to a stop signal.</summary>
     /// <param name="folder">The run.</param>
-    /// <param name="threads">Threads.</param>
+    /// <param name="backend">The backend of the run's inputs.</param>
+    /// <param name="threads">Threads it has.</param>
     /// <param name="display">Shows progress.</param>
     /// <param name="stop">Asks to stop.</param>
     /// <returns>The report, or null if the run was stopped; it can be resumed.</returns>
-    public static RunReport? Execute(RunFolder folder, int threads, IStepDisplay display, CancellationToken stop)
+    public static RunReport? Execute(RunFolder folder, Backend backend, int threads, IStepDisplay display, CancellationToken stop)
     {
         long start = Stopwatch.GetTimestamp();
         folder.RequireNumericsVersion(FlowFactory.NumericsVersion);
         RunInputs inputs = folder.Inputs;
-        Backend backend = Backends.Create(inputs.Backend, threads);
         ParameterSet parameters = FlowFactory.Parameters(inputs);
         SchemeDefinition scheme = FlowFactory.Scheme(inputs);
         var options = new RunOptions { Started = s => display.Start(s, inputs.Steps), StepDone = display.Show };

@@ -17,10 +17,7 @@ internal sealed class FlowOptions
     /// <summary>Most steps accepted: 2^1000 sites still have a logarithm.</summary>
     public const int MostSteps = 1000;
 
-    public Argument<string> Model { get; } = new("model")
-    {
-        Description = "Name of a model; 'tensorrg models' lists them.",
-    };
+    public Argument<string> Model { get; } = TextInput.Required("model", "Name of a model; 'tensorrg models' lists them.");
 
     public Option<string> Temperature { get; } = new("--temperature", "-T")
     {

@@ -25,13 +25,13 @@ internal static class NumberOption
             CustomParser = result => Read(result, name, long.MinValue, long.MaxValue),
         };
 
-    /// <summary>A list of ascending whole numbers, separated by commas.</summary>
-    public static Option<int[]> Ascending(string name, string description, int[] fallback, int minimum)
+    /// <summary>A list of ascending whole numbers between bounds, separated by commas.</summary>
+    public static Option<int[]> Ascending(string name, string description, int[] fallback, int minimum, int maximum)
         => new(name)
         {
             Description = description,
             DefaultValueFactory = _ => fallback,
-            CustomParser = result => ReadList(result, name, minimum),
+            CustomParser = result => ReadList(result, name, minimum, maximum),
         };
 
     /// <summary>A finite real number.</summary>
@@ -67,20 +67,20 @@ internal static class NumberOption
             : FormattableString.Invariant($" from {minimum} to {maximum}");
     }
 
-    private static int[] ReadList(ArgumentResult result, string name, int minimum)
+    private static int[] ReadList(ArgumentResult result, string name, int minimum, int maximum)
     {
         string text = result.Tokens[0].Value;
         var values = new List<int>();
         foreach (string part in text.Split(','))
         {
-            if (int.TryParse(part.Trim(), NumberStyles.None, CultureInfo.InvariantCulture, out int value) && value >= minimum
+            if (int.TryParse(part.Trim(), NumberStyles.None, CultureInfo.InvariantCulture, out int value) && value >= minimum && value <= maximum
                 && (values.Count == 0 || value > values[^1]))
             {
                 values.Add(value);
                 continue;
             }
 
-            result.AddError(FormattableString.Invariant($"{name} takes ascending whole numbers of at least {minimum}, separated by commas, such as 8,16,24; '{part.Trim()}' in '{text}' does not fit."));
+            result.AddError(FormattableString.Invariant($"{name} takes ascending whole numbers{Range(minimum, maximum)}, separated by commas, such as 8,16,24; '{part.Trim()}' in '{text}' does not fit."));
             return [];
         }
 

@@ -20,12 +20,16 @@ internal sealed class RingMap<T> : ILinearMap<T>, IDisposable
     private readonly TensorAlgebra<T> _algebra;
     private readonly Tensor<T>[] _pieces;
     private readonly Tensor<T>[] _conjugates;
+    private readonly Tensor<T>[] _turned;
+    private readonly Tensor<T>[] _turnedConjugates;
 
     public RingMap(TensorAlgebra<T> algebra, Tensor<T> a, Tensor<T> b, Tensor<T> c, Tensor<T> d)
     {
         _algebra = algebra;
         _pieces = [a, b, c, d];
         _conjugates = Array.ConvertAll(_pieces, static p => p.Conjugate());
+        _turned = [a.Permute(0, 2, 1), d.Permute(2, 1, 0)];
+        _turnedConjugates = [_conjugates[2].Permute(0, 2, 1), _conjugates[1].Permute(2, 1, 0)];
         RowLegs = [a.Legs[0], b.Legs[0]];
         ColumnLegs = [c.Legs[0], d.Legs[0]];
     }
@@ -35,13 +39,13 @@ internal sealed class RingMap<T> : ILinearMap<T>, IDisposable
     public ImmutableArray<Leg> ColumnLegs { get; }
 
     public Tensor<T> Apply(Tensor<T> block)
-        => Batched(block, RowLegs, batch => Ring(_pieces[0], _pieces[1], _pieces[2], _pieces[3], batch));
+        => Batched(block, RowLegs, batch => Ring(_turned, _pieces[1], _pieces[2], batch));
 
     public Tensor<T> ApplyAdjoint(Tensor<T> block)
         => Batched(
             block,
             [ColumnLegs[0].Dual, ColumnLegs[1].Dual],
-            batch => Ring(_conjugates[2], _conjugates[3], _conjugates[0], _conjugates[1], batch));
+            batch => Ring(_turnedConjugates, _conjugates[3], _conjugates[0], batch));
 
     public Tensor<T> ToTensor()
     {
@@ -52,17 +56,21 @@ internal sealed class RingMap<T> : ILinearMap<T>, IDisposable
 
     public void Dispose()
     {
-        foreach (Tensor<T> conjugate in _conjugates)
-            conjugate.Dispose();
+        foreach (Tensor<T> own in (Tensor<T>[])[.. _conjugates, .. _turned, .. _turnedConjugates])
+            own.Dispose();
     }
 
-    /// <summary>[a, b, x] from [c*, d*, x].</summary>
-    private Tensor<T> Ring(Tensor<T> a, Tensor<T> b, Tensor<T> c, Tensor<T> d, Tensor<T> block)
+    /// <summary>
+    /// [a, b, x] from [c*, d*, x]. The first and last piece come as [a, s1, s0] and [s0, s3, d], in the order in which their inner legs
+    /// lie in what they multiply, so that the large intermediates are read where they are.
+    /// </summary>
+    private Tensor<T> Ring(Tensor<T>[] turned, Tensor<T> b, Tensor<T> c, Tensor<T> block)
     {
         using Tensor<T> first = _algebra.Contract(c, [0], block, [0]);
-        using Tensor<T> second = _algebra.Contract(first, [1, 2], d, [1, 0]);
+        using Tensor<T> second = _algebra.ContractMiddle(turned[1], first);
         using Tensor<T> third = _algebra.Contract(b, [2], second, [0]);
-        return _algebra.Contract(a, [1, 2], third, [3, 1]);
+        using Tensor<T> fourth = _algebra.ContractMiddle(turned[0], third);
+        return fourth.Permute(1, 0, 2);
     }
 
     private Tensor<T> Batched(Tensor<T> block, ImmutableArray<Leg> rows, Func<Tensor<T>, Tensor<T>> apply)

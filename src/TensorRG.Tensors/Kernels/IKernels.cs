@@ -22,6 +22,22 @@ public interface IKernels<T>
     void Multiply(MatrixView<T> a, MatrixView<T> b, MatrixView<T> c, bool accumulate);
 
     /// <summary>
+    /// The products C_i = A B_i, or C_i += A B_i, for B_i and C_i that follow one another in memory at fixed distances.
+    /// </summary>
+    /// <param name="a">m x k.</param>
+    /// <param name="b">B_0, k x n.</param>
+    /// <param name="stepB">Distance in elements from B_i to B_(i+1).</param>
+    /// <param name="c">C_0, m x n, not conjugated.</param>
+    /// <param name="stepC">Distance in elements from C_i to C_(i+1); the C_i do not overlap.</param>
+    /// <param name="count">Number of products.</param>
+    /// <param name="accumulate">Whether to add to the C_i instead of overwriting them.</param>
+    unsafe void MultiplyEach(MatrixView<T> a, MatrixView<T> b, nint stepB, MatrixView<T> c, nint stepC, int count, bool accumulate)
+    {
+        for (int i = 0; i < count; i++)
+            Multiply(a, b.Advanced(i * stepB), c.Advanced(i * stepC), accumulate);
+    }
+
+    /// <summary>
     /// Thin QR in place: A (m x n, m >= n) = Q R with Q^H Q = 1 to round-off, R upper triangular with real
     /// non-negative diagonal. A rank-deficient A still gives orthonormal Q.
     /// </summary>

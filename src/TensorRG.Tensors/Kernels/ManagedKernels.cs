@@ -14,12 +14,31 @@ namespace TensorRG.Tensors.Kernels;
 public sealed class ManagedKernels<T>(Workers workers, SimdPath path) : IKernels<T>
     where T : unmanaged, INumberBase<T>
 {
+    /// <summary>Multiply-adds below which products stay on one thread.</summary>
+    private const double SmallestShared = 128 * 128 * 128;
+
     /// <summary>Threads for large problems.</summary>
     internal Workers Workers { get; } = workers;
 
     /// <inheritdoc/>
     public void Multiply(MatrixView<T> a, MatrixView<T> b, MatrixView<T> c, bool accumulate)
         => Gemm.Multiply(a, b, c, accumulate, Workers, path);
+
+    /// <inheritdoc/>
+    public void MultiplyEach(MatrixView<T> a, MatrixView<T> b, nint stepB, MatrixView<T> c, nint stepC, int count, bool accumulate)
+    {
+        double work = (double)a.Rows * a.Columns * b.Columns * count;
+        if (Workers.Threads == 1 || count < Workers.Threads || work < SmallestShared)
+            Part(0, count);
+        else
+            Workers.Run(Workers.Threads, i => Part(count * i / Workers.Threads, count * (i + 1) / Workers.Threads));
+
+        void Part(int first, int end)
+        {
+            for (int i = first; i < end; i++)
+                Gemm.Multiply(a, b.Advanced(i * stepB), c.Advanced(i * stepC), accumulate, Workers, path);
+        }
+    }
 
     /// <inheritdoc/>
     /// <exception cref="ArgumentException">A has fewer rows than columns.</exception>

@@ -65,6 +65,10 @@ public readonly unsafe struct MatrixView<T>(
     /// <summary>The complex conjugate, as a view on the same memory.</summary>
     public MatrixView<T> Conjugate => new(Data, Rows, Columns, RowStride, ColumnStride, !Conjugated);
 
+    /// <summary>The same window further on in memory.</summary>
+    /// <param name="distance">How many elements further.</param>
+    public MatrixView<T> Advanced(nint distance) => new(Data + distance, Rows, Columns, RowStride, ColumnStride, Conjugated);
+
     /// <summary>The element (i, j) as a reader sees it: conjugated where the view says so.</summary>
     /// <param name="i">Row, from 0.</param>
     /// <param name="j">Column, from 0.</param>
