@@ -79,9 +79,11 @@ public sealed class TensorAlgebra<T>(Backend backend)
     /// <exception cref="ArgumentException">The legs do not match, or the tensors have other ranks.</exception>
     public Tensor<T> ContractMiddle(Tensor<T> m, Tensor<T> y)
     {
-        CheckPairs(m, [1, 2], y, [1, 2]);
+        ArgumentNullException.ThrowIfNull(m);
+        ArgumentNullException.ThrowIfNull(y);
         if (m.Rank != 3 || y.Rank != 4)
             throw new ArgumentException("The middle contraction takes tensors of three and four legs.", nameof(m));
+        CheckPairs(m, [1, 2], y, [1, 2]);
         Charge flux = m.Legs[0].Group.Add(m.Flux, y.Flux);
         Tensor<T> result = Tensor<T>.Allocate([y.Legs[0], m.Legs[0], y.Legs[3]], flux, clear: false);
         for (int block = 0; block < result.Layout.Count; block++)
