@@ -24,6 +24,13 @@ public sealed class AlgebraTests
     public void Contraction_of_complex_numbers_equals_plain_loops(int pairs) => RandomCase.Check(random => CheckContraction<Complex>(random, pairs), 120);
 
     [Fact]
+    public void Contraction_over_middle_legs_equals_plain_loops()
+    {
+        RandomCase.Check(CheckMiddle<double>, 120);
+        RandomCase.Check(CheckMiddle<Complex>, 120);
+    }
+
+    [Fact]
     public void Partial_traces_equal_plain_loops()
     {
         RandomCase.Check(CheckTrace<double>, 100);
@@ -105,6 +112,7 @@ public sealed class AlgebraTests
         Says("1 axes cannot be paired with 2", () => algebra.Contract(a, [0], b, [0, 1]));
         Says("Leg 0", () => TensorAlgebra<double>.Trace(b, [0], [1]));
         Says("named twice", () => algebra.Contract(a, [0, 0], a, [1, 1]));
+        Says("three and four legs", () => algebra.ContractMiddle(a, b));
         Says("cannot be added", () => TensorAlgebra<double>.Add(a, b, 1));
         Says("do not fit leg 0", () => TensorAlgebra<double>.ScaleLeg(a, 0, BondWeights.Ones(other)));
     }
@@ -127,6 +135,20 @@ public sealed class AlgebraTests
         TensorAssert.Same(NaiveTensor<T>.Contract(naiveA, axesA, naiveB, axesB), c, naiveA.Norm() * naiveB.Norm());
         Assert.Equal(random.Group.Add(a.Flux, b.Flux), c.Flux);
         Assert.Equal(legsA.Where((_, i) => !axesA.Contains(i)).Concat(legsB.Where((_, i) => !axesB.Contains(i))), c.Legs.ToArray());
+    }
+
+    /// <summary>R[p, n, x] from M[n, k, l] and Y[p, k, l, x].</summary>
+    private static void CheckMiddle<T>(RandomCase random)
+        where T : unmanaged, INumberBase<T>
+    {
+        Leg[] legs = random.Legs(5);
+        Leg[] legsM = [legs[0], legs[1], legs[2]], legsY = [legs[3], legs[1].Dual, legs[2].Dual, legs[4]];
+        using Tensor<T> m = random.Tensor<T>(random.Flux(legsM), legsM), y = random.Tensor<T>(random.Flux(legsY), legsY);
+        using Tensor<T> r = new TensorAlgebra<T>(Managed).ContractMiddle(m, y);
+        NaiveTensor<T> naiveM = NaiveTensor<T>.Of(m), naiveY = NaiveTensor<T>.Of(y);
+        TensorAssert.Same(NaiveTensor<T>.Contract(naiveY, [1, 2], naiveM, [1, 2]).Permute([0, 2, 1]), r, naiveM.Norm() * naiveY.Norm());
+        Assert.Equal(random.Group.Add(m.Flux, y.Flux), r.Flux);
+        Assert.Equal([legs[3], legs[0], legs[4]], r.Legs.ToArray());
     }
 
     /// <summary>Leg i goes to position order[i].</summary>
