@@ -12,6 +12,9 @@ namespace TensorRG.CoarseGraining;
 public sealed class Flow<T> : IFlow
     where T : unmanaged, INumberBase<T>
 {
+    /// <summary>How far from 1 round-off may leave the norm of a restored transfer matrix.</summary>
+    private const double NormTolerance = 1e-9;
+
     private readonly IScheme<T> _scheme;
     private readonly InitialNetwork<T> _network;
     private readonly List<StepRecord> _records = [];
@@ -44,10 +47,13 @@ public sealed class Flow<T> : IFlow
     public StepRecord Advance()
     {
         long start = Stopwatch.GetTimestamp();
-        CoarseStep<T> result = _scheme.Step(_state, Step + 1);
-        foreach (Tensor<T> tensor in _state.Tensors.Values)
+        NetworkState<T> before = _state;
+        StepRecord record = Record(_scheme.Step(before, Step + 1), start);
+
+        // Only now: a step that fails leaves the flow where it was, so that it can still be saved.
+        foreach (Tensor<T> tensor in before.Tensors.Values)
             tensor.Dispose();
-        return Record(result, start);
+        return record;
     }
 
     /// <inheritdoc/>
@@ -69,12 +75,37 @@ public sealed class Flow<T> : IFlow
         List<StepRecord> records = RecordCodec.Read(reader);
         if (records.Count != snapshot.Step + 1)
             throw new SnapshotException($"The snapshot of step {snapshot.Step} holds {records.Count} records.");
-        _state = StateCodec.Read<T>(reader, _network.Site.Legs[0].Group);
+        NetworkState<T> state = ReadState(reader, records[^1]);
+        _state = state;
         _logScale = new CompensatedSum(sum[0], sum[1]);
         _records.Clear();
         _records.AddRange(records);
     }
 
+    /// <summary>
+    /// A state belongs to its record if it has the record's bonds and a transfer matrix of unit norm. That needs every
+    /// tensor and every weight: one that is missing, altered or of another shape does not pass.
+    /// </summary>
+    private NetworkState<T> ReadState(SnapshotReader reader, StepRecord record)
+    {
+        try
+        {
+            NetworkState<T> state = StateCodec.Read<T>(reader, _network.Site.Legs[0].Group);
+            (Leg vertical, Leg horizontal) = _scheme.Bonds(state);
+            if (!BondProfile.Of(vertical).SequenceEqual(record.VerticalBond) || !BondProfile.Of(horizontal).SequenceEqual(record.HorizontalBond))
+                throw new SnapshotException("The bonds of the snapshot's tensors are not those of its last record.");
+            double norm = TensorAlgebra<T>.Norm(_scheme.TransferMatrix(state));
+            return Math.Abs(norm - 1) <= NormTolerance
+                ? state
+                : throw new SnapshotException(FormattableString.Invariant($"The snapshot's tensors have a transfer matrix of norm {norm} where 1 belongs."));
+        }
+        catch (Exception e) when (e is ArgumentException or IndexOutOfRangeException or OverflowException or InsufficientMemoryException)
+        {
+            throw new SnapshotException("The tensors and weights of the snapshot do not fit together.", e);
+        }
+    }
+
+    /// <summary>Rescales a new state and makes it the present one; an exception leaves the flow as it was.</summary>
     private StepRecord Record(CoarseStep<T> result, long start)
     {
         int step = _records.Count;
@@ -83,14 +114,15 @@ public sealed class Flow<T> : IFlow
         double norm = TensorAlgebra<T>.Norm(matrix);
         if (!(norm > 0) || !double.IsFinite(norm))
             throw new ArithmeticException($"Step {step}: the transfer matrix has norm {norm}. All weights cancel or vanish, or the numbers left the range of doubles.");
-        _state = _scheme.Rescale(result.State, 1 / norm);
+        NetworkState<T> state = _scheme.Rescale(result.State, 1 / norm);
         matrix = TensorAlgebra<T>.Scale(matrix, Scalar.FromReal<T>(1 / norm));
-        _logScale.Add(Math.Log(norm) / vertices);
+        CompensatedSum logScale = _logScale;
+        logScale.Add(Math.Log(norm) / vertices);
         Complex trace = Scalar.ToComplex(TensorAlgebra<T>.Trace(matrix, [0], [1]).Elements[0]);
-        CompensatedSum torus = _logScale;
+        CompensatedSum torus = logScale;
         torus.Add(Math.Log(trace.Magnitude) / vertices);
         double torusPerSite = torus.Value / _network.SitesPerTensor;
-        (Leg vertical, Leg horizontal) = _scheme.Bonds(_state);
+        (Leg vertical, Leg horizontal) = _scheme.Bonds(state);
         var record = new StepRecord
         {
             Step = step,
@@ -108,6 +140,7 @@ public sealed class Flow<T> : IFlow
             Seconds = Stopwatch.GetElapsedTime(start).TotalSeconds,
             Notices = result.Notices,
         };
+        (_state, _logScale) = (state, logScale);
         _records.Add(record);
         return record;
     }
@@ -116,7 +149,7 @@ public sealed class Flow<T> : IFlow
     private double BulkEstimate(int step, double torusPerSite)
     {
         int earlier = step - _scheme.ShapePeriod;
-        if (earlier < 0)
+        if (earlier < 0 || !double.IsFinite(torusPerSite) || !double.IsFinite(_records[earlier].LogZTorusPerSite))
             return double.NaN;
         double ratio = Math.Pow(2, _scheme.ShapePeriod);
         return torusPerSite + ((torusPerSite - _records[earlier].LogZTorusPerSite) / (ratio - 1));

@@ -67,6 +67,8 @@ internal static class StateCodec
     {
         int[] arrows = reader.Integers(path + "/arrows");
         int[] counts = reader.Integers(path + "/sectors", arrows.Length);
+        if (arrows.Length == 0 || arrows.Any(static a => a is not (1 or -1)) || counts.Any(static n => n < 0))
+            throw new SnapshotException($"The snapshot holds impossible legs under '{path}': directions are 1 or -1, numbers of sectors are not negative.");
         int[] dimensions = reader.Integers(path + "/dimensions", counts.Sum());
         int[] charges = reader.Integers(path + "/charges", 4L * dimensions.Length);
         ImmutableArray<Leg>.Builder legs = ImmutableArray.CreateBuilder<Leg>(arrows.Length);

@@ -29,7 +29,7 @@ public sealed record StepRecord
     /// <summary>Largest discarded weight of this step's truncations, relative to the total: sum of discarded squared singular values over the sum of all.</summary>
     public required double DiscardedWeight { get; init; }
 
-    /// <summary>ln |Z| per site of the torus made of one tensor.</summary>
+    /// <summary>ln |Z| per site of the torus made of one tensor; minus infinity where Z is zero.</summary>
     public required double LogZTorusPerSite { get; init; }
 
     /// <summary>Argument of Z of that torus, in (-pi, pi]; 0 for positive weights.</summary>
@@ -37,7 +37,7 @@ public sealed record StepRecord
 
     /// <summary>
     /// ln Z per site of the infinite lattice, estimated from this step and an earlier one of the same shape:
-    /// (ln Z' - ln Z) / (N' - N), which drops the universal factor of the torus. NaN where there is no earlier step.
+    /// (ln Z' - ln Z) / (N' - N), which drops the universal factor of the torus. NaN where there is no earlier step or one of the two is zero.
     /// </summary>
     public required double LogZPerSite { get; init; }
 

@@ -26,13 +26,13 @@ internal static class TransferSpectrum
         return (trace * trace / square).Real;
     }
 
-    /// <summary>The leading eigenvalues relative to the largest.</summary>
+    /// <summary>The leading eigenvalues relative to the largest; zeros where all vanish.</summary>
     public static ImmutableArray<SpectrumLine> Leading<T>(Tensor<T> matrix)
         where T : unmanaged, INumberBase<T>
     {
         IReadOnlyList<(Charge Charge, Complex Value)> values = GeneralEigen.Values(matrix);
         AbelianGroup group = matrix.Legs[0].Group;
-        Complex first = values.Count > 0 ? values[0].Value : Complex.One;
+        Complex first = values.Count > 0 && values[0].Value != Complex.Zero ? values[0].Value : Complex.One;
         return [.. values.Take(Lines).Select(v => new SpectrumLine(
             group.Text(v.Charge),
             v.Value.Magnitude / first.Magnitude,

@@ -15,10 +15,11 @@ public sealed record PhaseReading(int? Phases, double SettledAt, double Plateau,
     private const int ShortestPlateau = 6;
 
     /// <summary>Reads the phase from a flow.</summary>
-    /// <param name="records">The records from step 0 on.</param>
+    /// <param name="records">The records from step 0 on, at least one.</param>
     public static PhaseReading Of(IReadOnlyList<StepRecord> records)
     {
         ArgumentNullException.ThrowIfNull(records);
+        ArgumentOutOfRangeException.ThrowIfZero(records.Count);
         StepRecord[] squares = [.. records.Where(static r => r.AspectRatio == 1)];
         double final = Math.Round(squares[^1].DegeneracyRatio);
         int settled = squares.Length;

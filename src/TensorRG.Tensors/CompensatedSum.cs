@@ -35,11 +35,12 @@ public struct CompensatedSum : IEquatable<CompensatedSum>
     public static bool operator !=(CompensatedSum left, CompensatedSum right) => !left.Equals(right);
 
     /// <summary>Adds a term.</summary>
-    /// <param name="term">Any number.</param>
+    /// <param name="term">Any number; an infinite one makes the sum infinite.</param>
     public void Add(double term)
     {
         double sum = High + term;
-        Low += Math.Abs(High) >= Math.Abs(term) ? (High - sum) + term : (term - sum) + High;
+        if (double.IsFinite(sum)) // The error of an infinite sum would be infinity minus infinity.
+            Low += Math.Abs(High) >= Math.Abs(term) ? (High - sum) + term : (term - sum) + High;
         High = sum;
     }
 

@@ -31,7 +31,7 @@ public sealed class TensorAlgebra<T>(Backend backend)
         int[] freeA = Axes.Others(a.Rank, axesA), freeB = Axes.Others(b.Rank, axesB);
         using BlockMatrix<T> left = BlockMatrix<T>.From(a, freeA, axesA);
         using BlockMatrix<T> right = BlockMatrix<T>.From(b, axesB, freeB);
-        AbelianGroup group = left.Rows.Group;
+        AbelianGroup group = a.Rank > 0 ? left.Rows.Group : right.Rows.Group; // A number has no legs that name its group.
         Charge flux = group.Add(a.Flux, b.Flux);
         Tensor<T> result = Tensor<T>.Allocate([.. left.Rows.Legs, .. right.Columns.Legs], flux, clear: false);
         Span<int> sectors = stackalloc int[result.Rank];
@@ -79,9 +79,11 @@ public sealed class TensorAlgebra<T>(Backend backend)
     /// <exception cref="ArgumentException">The legs do not match, or the tensors have other ranks.</exception>
     public Tensor<T> ContractMiddle(Tensor<T> m, Tensor<T> y)
     {
-        CheckPairs(m, [1, 2], y, [1, 2]);
+        ArgumentNullException.ThrowIfNull(m);
+        ArgumentNullException.ThrowIfNull(y);
         if (m.Rank != 3 || y.Rank != 4)
             throw new ArgumentException("The middle contraction takes tensors of three and four legs.", nameof(m));
+        CheckPairs(m, [1, 2], y, [1, 2]);
         Charge flux = m.Legs[0].Group.Add(m.Flux, y.Flux);
         Tensor<T> result = Tensor<T>.Allocate([y.Legs[0], m.Legs[0], y.Legs[3]], flux, clear: false);
         for (int block = 0; block < result.Layout.Count; block++)
@@ -91,7 +93,7 @@ public sealed class TensorAlgebra<T>(Backend backend)
         return result;
     }
 
-    /// <summary>Frobenius norm: the square root of the sum of |element|^2, safe against overflow.</summary>
+    /// <summary>Frobenius norm: the square root of the sum of |element|^2, safe against overflow and underflow.</summary>
     /// <param name="a">Any tensor.</param>
     public static double Norm(Tensor<T> a)
     {
@@ -101,6 +103,12 @@ public sealed class TensorAlgebra<T>(Backend backend)
             return largest;
         double sum = 0;
         double inverse = 1 / largest;
+        if (double.IsInfinity(inverse))
+        {
+            using Tensor<T> lifted = Scale(a, Scalar.FromReal<T>(Math.ScaleB(1, 600)));
+            return Math.ScaleB(Norm(lifted), -600);
+        }
+
         foreach (T x in a.Elements)
             sum += Scalar.SquaredMagnitude(x * Scalar.FromReal<T>(inverse));
         return largest * Math.Sqrt(sum);

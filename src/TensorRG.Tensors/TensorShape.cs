@@ -102,7 +102,7 @@ public static class TensorShape
         for (int sector = 0; sector < old.Sectors.Length; sector++)
         {
             using Tensor<T> slice = tensor.Slice(axis, sector, 0, old.Sectors[sector].Dimension);
-            result.Assign(axis, reversed.IndexOf(old.Group.Negate(old.Sectors[sector].Charge)), 0, slice);
+            SliceCopy.Run(result, axis, reversed.IndexOf(old.Group.Negate(old.Sectors[sector].Charge)), 0, slice, intoSlice: false);
         }
 
         return result;
@@ -115,11 +115,13 @@ public static class TensorShape
     /// <param name="sector">Index of the sector.</param>
     /// <param name="start">First state within the sector.</param>
     /// <param name="count">Number of states, at least 1.</param>
-    public static unsafe Tensor<T> Slice<T>(this Tensor<T> tensor, int axis, int sector, int start, int count)
+    /// <exception cref="ArgumentOutOfRangeException">The states reach beyond the sector.</exception>
+    public static Tensor<T> Slice<T>(this Tensor<T> tensor, int axis, int sector, int start, int count)
         where T : unmanaged, INumberBase<T>
     {
         ArgumentNullException.ThrowIfNull(tensor);
         Leg whole = tensor.Legs[axis];
+        CheckStates(whole.Sectors[sector].Dimension, start, count);
         var part = new Leg(whole.Group, whole.Arrow, [new Sector(whole.Sectors[sector].Charge, count)]);
         Tensor<T> result = Tensor<T>.Allocate(tensor.Legs.SetItem(axis, part), tensor.Flux, clear: false);
         SliceCopy.Run(tensor, axis, sector, start, result, intoSlice: true);
@@ -133,11 +135,26 @@ public static class TensorShape
     /// <param name="sector">Index of the sector in the whole leg.</param>
     /// <param name="start">First state within the sector.</param>
     /// <param name="slice">The slice.</param>
+    /// <exception cref="ArgumentException">The slice does not have the legs and flux of a slice of this tensor at this place.</exception>
     public static void Assign<T>(this Tensor<T> tensor, int axis, int sector, int start, Tensor<T> slice)
         where T : unmanaged, INumberBase<T>
     {
         ArgumentNullException.ThrowIfNull(tensor);
         ArgumentNullException.ThrowIfNull(slice);
+        Leg whole = tensor.Legs[axis];
+        int count = slice.Rank > axis ? slice.Legs[axis].Dimension : 0;
+        CheckStates(whole.Sectors[sector].Dimension, start, count);
+        var part = new Leg(whole.Group, whole.Arrow, [new Sector(whole.Sectors[sector].Charge, count)]);
+        if (slice.Flux != tensor.Flux || !tensor.Legs.SetItem(axis, part).SequenceEqual(slice.Legs))
+            throw new ArgumentException($"{slice} is not a slice of leg {axis} of {tensor} in sector {sector}.", nameof(slice));
         SliceCopy.Run(tensor, axis, sector, start, slice, intoSlice: false);
+    }
+
+    // The copy itself is unchecked: a range beyond the sector would read or write foreign memory.
+    private static void CheckStates(int dimension, int start, int count)
+    {
+        ArgumentOutOfRangeException.ThrowIfNegative(start);
+        ArgumentOutOfRangeException.ThrowIfLessThan(count, 1);
+        ArgumentOutOfRangeException.ThrowIfGreaterThan(count, dimension - start);
     }
 }

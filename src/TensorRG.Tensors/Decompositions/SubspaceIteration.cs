@@ -150,6 +150,8 @@ internal sealed class SubspaceIteration<T>
     private bool Grow(Dictionary<Charge, double[]> values)
     {
         Dictionary<Charge, int> counts = SectorCut.Counts(values, _rule, out _cutsMultiplet);
+        if (counts.Values.Sum() == 0)
+            throw new DecompositionException("The matrix is zero: it has no singular value to keep.");
         _kept.Clear();
         var missing = new SortedDictionary<Charge, int>();
         foreach ((Charge charge, int count) in counts)
@@ -176,6 +178,8 @@ internal sealed class SubspaceIteration<T>
     {
         using Tensor<T> fresh = RandomBlock(missing);
         using Tensor<T> moved = _map.Apply(fresh);
+        using Tensor<T> sample = _sample!;
+        _sample = BlockJoin.Concatenate(sample, moved);
         using Tensor<T> joined = BlockJoin.Concatenate(_left!, moved);
         (Tensor<T> basis, BlockMatrix<T> unused) = GradedQr.Orthonormalize(_algebra.Kernels, joined);
         unused.Dispose();
