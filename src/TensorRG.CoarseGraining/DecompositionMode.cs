@@ -3,7 +3,7 @@ namespace TensorRG.CoarseGraining;
 /// <summary>How a scheme finds the singular values it keeps.</summary>
 public enum DecompositionMode
 {
-    /// <summary>By whichever way costs least; the results agree to round-off.</summary>
+    /// <summary>By whichever way costs least. Where the kept values are set apart from the rest the ways agree to round-off; without a gap at the cut they agree to the weight that is discarded.</summary>
     Auto,
 
     /// <summary>By block subspace iteration, never forming a four-leg tensor where the scheme can avoid it.</summary>

@@ -1,4 +1,3 @@
-using System.Collections.Immutable;
 using System.Numerics;
 using TensorRG.Tensors;
 using TensorRG.Tensors.Decompositions;
@@ -32,8 +31,7 @@ internal sealed class HigherOrderScheme<T>(TensorAlgebra<T> algebra, SchemeSetti
         TruncatedEigen<T> isometry = Isometry(oriented);
         using Tensor<T> joined = Join(oriented, isometry.Vectors);
         Tensor<T> site = vertical ? joined.Clone() : joined.Permute(1, 0, 3, 2);
-        ImmutableArray<string> notices = isometry.Truncation.CutsMultiplet ? ["the cut falls inside a multiplet"] : [];
-        return new CoarseStep<T>(NetworkState<T>.Of(Site, site), isometry.Truncation.DiscardedFraction, notices);
+        return new CoarseStep<T>(NetworkState<T>.Of(Site, site), isometry.Truncation.DiscardedFraction, [.. isometry.Truncation.Notices]);
     }
 
     /// <inheritdoc/>

@@ -54,9 +54,7 @@ internal sealed class PlaquetteScheme<T>(TensorAlgebra<T> algebra, SchemeSetting
             second = Decompose(state, [NorthEast, SouthEast, SouthWest, NorthWest], step, 1);
         }
 
-        ImmutableArray<string> notices = first.Truncation.CutsMultiplet || second.Truncation.CutsMultiplet
-            ? ["the cut falls inside a multiplet"]
-            : [];
+        ImmutableArray<string> notices = [.. first.Truncation.Notices.Union(second.Truncation.Notices)];
         double discarded = Math.Max(first.Truncation.DiscardedFraction, second.Truncation.DiscardedFraction);
         return new CoarseStep<T>(Assemble(state, first, second), discarded, notices);
     }
