@@ -18,6 +18,7 @@ public sealed class CheckpointPolicy
     private long _start;
     private TimeSpan _spent;
     private TimeSpan _last;
+    private bool _isFirst = true;
 
     /// <summary>A policy for one run.</summary>
     /// <param name="share">Largest share of the time, above 0 and at most 1; 1 means after every step.</param>
@@ -46,12 +47,20 @@ public sealed class CheckpointPolicy
     /// <summary>Whether a checkpoint now keeps within the share.</summary>
     internal bool IsDue() => _spent + _last <= _share * (_clock.GetElapsedTime(_start) + _last);
 
-    /// <summary>Stores a checkpoint and counts the time.</summary>
+    /// <summary>
+    /// Stores a checkpoint and counts the time. The first one is not counted: most of its time goes into the runtime's
+    /// compiler, and would keep a short run from storing a second one.
+    /// </summary>
     internal void Measure(Action save)
     {
         long begin = _clock.GetTimestamp();
         save();
-        _last = _clock.GetElapsedTime(begin);
-        _spent += _last;
+        if (!_isFirst)
+        {
+            _last = _clock.GetElapsedTime(begin);
+            _spent += _last;
+        }
+
+        _isFirst = false;
     }
 }

@@ -120,7 +120,8 @@ public sealed class BadInputTests : IDisposable
         { "run ising --cut multiplet", "'multiplet'", "multiplets, anywhere" },
         { "run ising --grading yes", "'yes'", "on, off" },
         { "run ising --decomposition fast", "'fast'", "auto, iterative, full" },
-        { "run ising --bond-exponent half", "'half'", "-0.5" },
+        { "run ising --bond-exponent half", "'half'", "from -1 to 0.5" },
+        { "run ising --bond-exponent 5", "'5'", "from -1 to 0.5" },
         { "run ising --bond-exponent NaN", "'NaN'", "number" },
 
         // Lists of bond dimensions.

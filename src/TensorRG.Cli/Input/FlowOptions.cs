@@ -41,7 +41,7 @@ internal sealed class FlowOptions
 
     public Option<string> Decomposition { get; } = OneOf("--decomposition", "How singular values are found: 'iterative' never forms a four-leg tensor, 'full' decomposes it completely (slow, for checks).", "auto", "auto", "iterative", "full");
 
-    public Option<double?> BondExponent { get; } = NumberOption.Real("--bond-exponent", "Exponent k of the bond weights; bond-weighted scheme only. Default: -0.5.");
+    public Option<double?> BondExponent { get; } = NumberOption.Real("--bond-exponent", "Exponent k of the bond weights; bond-weighted scheme only. Error bars are calibrated for the default of -0.5.", -1, 0.5);
 
     public Option<long> Seed { get; } = NumberOption.Long("--seed", "Seed of the random blocks of the iterative decomposition.", 1);
 

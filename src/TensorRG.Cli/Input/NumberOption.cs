@@ -34,17 +34,17 @@ internal static class NumberOption
             CustomParser = result => ReadList(result, name, minimum, maximum),
         };
 
-    /// <summary>A finite real number.</summary>
-    public static Option<double?> Real(string name, string description)
+    /// <summary>A real number between bounds.</summary>
+    public static Option<double?> Real(string name, string description, double minimum, double maximum)
         => new(name)
         {
             Description = description,
             CustomParser = result =>
             {
                 string text = result.Tokens[0].Value;
-                if (double.TryParse(text, NumberStyles.Float, CultureInfo.InvariantCulture, out double value) && double.IsFinite(value))
+                if (double.TryParse(text, NumberStyles.Float, CultureInfo.InvariantCulture, out double value) && value >= minimum && value <= maximum)
                     return value;
-                result.AddError($"{name} takes a number such as -0.5, not '{text}'.");
+                result.AddError(FormattableString.Invariant($"{name} takes a number from {minimum} to {maximum}, not '{text}'."));
                 return null;
             },
         };

@@ -18,6 +18,11 @@ public sealed record CutRule(int MaxDimension, double MultipletGap = CutRule.Def
     /// <summary>Round-off of a computed value relative to the largest: added to the gap when multiplets are recognised.</summary>
     private const double AbsoluteNoise = 4e-15;
 
+    /// <summary>Largest number kept, at least 1.</summary>
+    public int MaxDimension { get; } = MaxDimension >= 1
+        ? MaxDimension
+        : throw new ArgumentOutOfRangeException(nameof(MaxDimension), MaxDimension, "A bond keeps at least one state.");
+
     /// <summary>The number of values to keep.</summary>
     /// <param name="descending">All known values, descending, non-negative.</param>
     /// <param name="cutsMultiplet">

@@ -23,6 +23,7 @@ internal sealed class SubspaceIteration<T>
     private Tensor<T>? _right;
     private BlockMatrix<T>? _triangles;
     private bool _cutsMultiplet;
+    private bool _isUnsettled;
 
     public SubspaceIteration(TensorAlgebra<T> algebra, SubspaceOptions options, ILinearMap<T> map, CutRule rule, RandomSequence random)
     {
@@ -84,9 +85,11 @@ internal sealed class SubspaceIteration<T>
             if (mayStop && HasSettled(before!, after!))
                 return true;
             if (steps >= _options.MaxPowerSteps)
-                return !CanGoDense;
+                break;
         }
 
+        // Sectors too large for a full decomposition keep what the iteration has, and say so.
+        _isUnsettled = true;
         return !CanGoDense;
     }
 
@@ -106,7 +109,7 @@ internal sealed class SubspaceIteration<T>
 
             TruncatedSvd<T> result = SvdAssembly.Build(_rows, _columns, factors, _kept, default);
             double kept = result.Weights.Values.Sum(static v => SectorCut.SquaredSum(v));
-            return result with { Truncation = new Truncation(kept, DiscardedWeight(factors), _cutsMultiplet) };
+            return result with { Truncation = new Truncation(kept, DiscardedWeight(factors), _cutsMultiplet, _isUnsettled) };
         }
         finally
         {
