@@ -5,9 +5,9 @@ namespace TensorRG.Physics.Tests;
 public sealed class PhaseReadingTests
 {
     [Theory]
-    [InlineData(1, "one phase: disordered")]
-    [InlineData(2, "2 coexisting phases: ordered")]
-    [InlineData(3, "3 coexisting phases: ordered")]
+    [InlineData(1, "one phase, disordered")]
+    [InlineData(2, "2 coexisting phases, ordered")]
+    [InlineData(3, "3 coexisting phases, ordered")]
     public void X_that_settles_at_an_integer_counts_the_phases(int phases, string words)
     {
         PhaseReading reading = PhaseReading.Of(SyntheticFlow.WithRatios(1.4, 1.6, 1.2 + (0.5 * (phases - 1)), phases + 0.1, phases + 0.01, phases, phases));
