@@ -118,6 +118,21 @@ internal sealed unsafe class BlockMatrix<T> : IDisposable
     /// </summary>
     public BlockMatrix<T> WithRows(FusedSpace rows) => new(rows, Columns, Flux, _blocks, null, this);
 
+    /// <summary>The transpose, in memory of its own.</summary>
+    public BlockMatrix<T> Turned()
+    {
+        BlockMatrix<T> result = Allocate(Columns, Rows, Flux);
+        foreach (Charge charge in Charges)
+        {
+            MatrixView<T> source = _blocks[charge], target = result._blocks[ColumnCharge(charge)];
+            StridedCopy.Run(
+                [target.Rows, target.Columns], source.Data, [source.ColumnStride, source.RowStride], target.Data, [target.RowStride, target.ColumnStride], false);
+        }
+
+        GC.KeepAlive(this);
+        return result;
+    }
+
     /// <summary>Sets a block to zero.</summary>
     public void Clear(Charge rowCharge)
     {

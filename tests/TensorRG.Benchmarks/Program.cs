@@ -6,6 +6,7 @@ return args switch
     ["copy"] => CopyBenchmark.Run(),
     ["decompositions", .. string[] tasks] => DecompositionBenchmark.Run(tasks),
     ["schemes"] => SchemeBenchmark.Run(),
+    ["one-size", string bondDimension] => SchemeBenchmark.OneSize(int.Parse(bondDimension, System.Globalization.CultureInfo.InvariantCulture)),
     ["error-bars"] => ErrorBarData.Run(),
     _ => Usage(),
 };

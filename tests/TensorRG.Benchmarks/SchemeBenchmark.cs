@@ -59,20 +59,37 @@ internal static class SchemeBenchmark
     {
         int[] bondDimensions = [16, 24, 32, 48, 64, 80, 96];
         var times = new Dictionary<int, double>();
-        Write($"time per step at Tc, steps 13 to 18, one run each");
+        Write($"time per step at Tc, steps 14 to 16, a process each");
+        double memory = 0;
         foreach (int bondDimension in bondDimensions)
         {
-            IReadOnlyList<StepRecord> records = Flow(bondDimension, 18).Records;
-            times[bondDimension] = records.Skip(13).Average(static r => r.Seconds);
-            double peak = Process.GetCurrentProcess().PeakWorkingSet64 / 1048576.0;
-            Write($"  chi = {bondDimension,3}  {times[bondDimension] * 1e3,9:0.0} ms   peak memory so far {peak,6:0} MiB");
+            (times[bondDimension], memory) = InOwnProcess(bondDimension);
+            Write($"  chi = {bondDimension,3}  {times[bondDimension] * 1e3,9:0.0} ms   peak memory {memory,6:0} MiB");
         }
 
         double exponent = Math.Log(times[96] / times[32]) / Math.Log(3);
-        double memory = Process.GetCurrentProcess().PeakWorkingSet64 / 1048576.0;
         Write($"  growth from 32 to 96 as chi^{exponent:0.00}, goal {GrowthGoal}: {(exponent <= GrowthGoal ? "met" : "MISSED")}");
         Write($"  memory at chi = 96 {memory:0} MiB, goal {MemoryGoal}: {(memory <= MemoryGoal ? "met" : "MISSED")}");
         return exponent <= GrowthGoal && memory <= MemoryGoal;
+    }
+
+    /// <summary>Seconds a step and peak memory in MiB, on standard output; what <see cref="InOwnProcess"/> starts.</summary>
+    public static int OneSize(int bondDimension)
+    {
+        Flow(bondDimension, 8);
+        IReadOnlyList<StepRecord> records = Flow(bondDimension, 16).Records;
+        double peak = Process.GetCurrentProcess().PeakWorkingSet64 / 1048576.0;
+        Write($"{records.Skip(13).Average(static r => r.Seconds):r} {peak:r}");
+        return 0;
+    }
+
+    private static (double Seconds, double Memory) InOwnProcess(int bondDimension)
+    {
+        string[] arguments = [Environment.GetCommandLineArgs()[0], "one-size", bondDimension.ToString(CultureInfo.InvariantCulture)];
+        using Process process = Process.Start(new ProcessStartInfo(Environment.ProcessPath!, arguments) { RedirectStandardOutput = true })!;
+        string[] words = process.StandardOutput.ReadToEnd().Split();
+        process.WaitForExit();
+        return (double.Parse(words[0], CultureInfo.InvariantCulture), double.Parse(words[1], CultureInfo.InvariantCulture));
     }
 
     private static (double Seconds, double Value) Compute(int bondDimension, int steps)
@@ -110,7 +127,7 @@ internal static class SchemeBenchmark
             if (process.ExitCode != 0)
                 return null;
             using JsonDocument json = JsonDocument.Parse(output);
-            return (json.RootElement.GetProperty("seconds").GetDouble(), json.RootElement.GetProperty("logZPerSite").GetDouble());
+            return (json.RootElement.GetProperty("seconds").GetDouble(), json.RootElement.GetProperty("lnZPerSite").GetDouble());
         }
         catch (System.ComponentModel.Win32Exception)
         {

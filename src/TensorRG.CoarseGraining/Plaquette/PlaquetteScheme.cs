@@ -50,8 +50,7 @@ internal sealed class PlaquetteScheme<T>(TensorAlgebra<T> algebra, SchemeSetting
         }
         else
         {
-            first = Decompose(state, [NorthWest, NorthEast, SouthEast, SouthWest], step, 0);
-            second = Decompose(state, [NorthEast, SouthEast, SouthWest, NorthWest], step, 1);
+            (first, second) = DecomposeBoth(state, step);
         }
 
         ImmutableArray<string> notices = [.. first.Truncation.Notices.Union(second.Truncation.Notices)];
@@ -100,6 +99,18 @@ internal sealed class PlaquetteScheme<T>(TensorAlgebra<T> algebra, SchemeSetting
 
     private RingMap<T> Ring(NetworkState<T> state, ReadOnlySpan<string> names)
         => new(algebra, state[names[0]], state[names[1]], state[names[2]], state[names[3]]);
+
+    /// <summary>The two decompositions know nothing of each other: while their matrices are small, each has a thread.</summary>
+    private (TruncatedSvd<T> First, TruncatedSvd<T> Second) DecomposeBoth(NetworkState<T> state, int step)
+    {
+        string[][] names = [[NorthWest, NorthEast, SouthEast, SouthWest], [NorthEast, SouthEast, SouthWest, NorthWest]];
+        var results = new TruncatedSvd<T>[2];
+        if (PairSize.IsSmall(state[NorthWest], state[NorthEast]))
+            algebra.Kernels.RunEach(2, i => results[i] = Decompose(state, names[i], step, i));
+        else
+            results = [Decompose(state, names[0], step, 0), Decompose(state, names[1], step, 1)];
+        return (results[0], results[1]);
+    }
 
     private TruncatedSvd<T> Decompose(NetworkState<T> state, ReadOnlySpan<string> names, int step, int index)
     {

@@ -12,26 +12,19 @@ namespace TensorRG.CoarseGraining.Plaquette;
 internal sealed class RingPairs<T> : IDisposable
     where T : unmanaged, INumberBase<T>
 {
-    private readonly Tensor<T> _left;
-    private readonly Tensor<T> _right;
-
     public RingPairs(TensorAlgebra<T> algebra, Tensor<T> a, Tensor<T> b, Tensor<T> c, Tensor<T> d)
     {
-        _left = algebra.Contract(a, [2], b, [1]);
-        _right = algebra.Contract(c, [2], d, [1]);
-        Map = new ProductMap<T>(
-            algebra,
-            new TensorMap<T>(algebra.Kernels, _left, [0, 2], [1, 3]),
-            new TensorMap<T>(algebra.Kernels, _right, [3, 1], [0, 2]));
+        Map = new ProductMap<T>(algebra, Pair(algebra, a, b, [0, 2], [1, 3]), Pair(algebra, c, d, [3, 1], [0, 2]));
     }
 
     /// <summary>The product.</summary>
     public ProductMap<T> Map { get; }
 
-    public void Dispose()
+    public void Dispose() => Map.Dispose();
+
+    private static TensorMap<T> Pair(TensorAlgebra<T> algebra, Tensor<T> first, Tensor<T> second, ReadOnlySpan<int> rows, ReadOnlySpan<int> columns)
     {
-        Map.Dispose();
-        _left.Dispose();
-        _right.Dispose();
+        using Tensor<T> pair = algebra.Contract(first, [2], second, [1]);
+        return new TensorMap<T>(algebra.Kernels, pair, rows, columns, copy: true);
     }
 }

@@ -69,21 +69,24 @@ internal sealed class SubspaceIteration<T>
         (_left, BlockMatrix<T> unused) = GradedQr.Orthonormalize(_algebra.Kernels, _sample);
         unused.Dispose();
         int steps = 0;
+        Dictionary<Charge, double[]>? last = null;
         for (int total = 0; total < 3 * _options.MaxPowerSteps; total++)
         {
             bool mayStop = ++steps >= _options.MinPowerSteps;
             Dictionary<Charge, double[]>? before = HalfStep(adjoint: true, wantValues: mayStop);
-            Dictionary<Charge, double[]>? after = HalfStep(adjoint: false, wantValues: true);
-            if (Grow(after!))
+            Dictionary<Charge, double[]> after = HalfStep(adjoint: false, wantValues: true)!;
+            if (Grow(after))
             {
                 if (IsDenseCheaper)
                     return false;
                 steps = 0;
+                last = null;
                 continue;
             }
 
-            if (mayStop && HasSettled(before!, after!))
+            if (mayStop && HasSettled(last!, before!, after))
                 return true;
+            last = after;
             if (steps >= _options.MaxPowerSteps)
                 break;
         }
@@ -170,11 +173,11 @@ internal sealed class SubspaceIteration<T>
         return true;
     }
 
-    /// <summary>Vectors for a sector that keeps a number of them: a multiple of four, which the kernels like.</summary>
+    /// <summary>Vectors for a sector that keeps a number of them: a multiple of eight, the width of a tile of the matrix product.</summary>
     private int BlockSize(Charge charge, int kept)
     {
         int extra = Math.Max(_options.MinOversampling, (_options.Oversampling + _limits.Count - 1) / _limits.Count);
-        return Math.Min(_limits[charge], (kept + extra + 3) / 4 * 4);
+        return Math.Min(_limits[charge], (kept + extra + 7) / 8 * 8);
     }
 
     private void Extend(SortedDictionary<Charge, int> missing)
@@ -192,20 +195,28 @@ internal sealed class SubspaceIteration<T>
             _sizes[charge] += extra;
     }
 
-    private bool HasSettled(Dictionary<Charge, double[]> before, Dictionary<Charge, double[]> after)
+    /// <summary>Whether two successive changes, over half a power step each, leave less than the tolerance to come.</summary>
+    private bool HasSettled(Dictionary<Charge, double[]> first, Dictionary<Charge, double[]> second, Dictionary<Charge, double[]> third)
     {
-        double largest = after.Values.Max(static v => v.Length == 0 ? 0 : v[0]);
+        double earlier = LargestChange(first, second), later = LargestChange(second, third);
+        double left = later * Math.Min(1, later / Math.Max(earlier, double.Epsilon));
+        return left <= _options.Tolerance;
+    }
+
+    /// <summary>The largest relative change of a kept value, round-off of the largest value apart.</summary>
+    private double LargestChange(Dictionary<Charge, double[]> before, Dictionary<Charge, double[]> after)
+    {
+        double largest = after.Values.Max(static v => v.Length == 0 ? 0 : v[0]), change = 0;
         foreach ((Charge charge, int count) in _kept)
         {
             for (int i = 0; i < count; i++)
             {
-                double change = Math.Abs(after[charge][i] - before[charge][i]);
-                if (!(change <= (_options.Tolerance * after[charge][i]) + (1e-15 * largest)))
-                    return false;
+                double difference = Math.Abs(after[charge][i] - before[charge][i]) - (1e-15 * largest);
+                change = difference > 0 ? Math.Max(change, difference / after[charge][i]) : change;
             }
         }
 
-        return true;
+        return change;
     }
 
     /// <summary>R = A s B^H gives U = Q A and V = P B.</summary>

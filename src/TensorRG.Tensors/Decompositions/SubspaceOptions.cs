@@ -16,10 +16,10 @@ public sealed record SubspaceOptions
     public int MaxPowerSteps { get; init; } = 8;
 
     /// <summary>
-    /// Stop when no kept singular value changes by more than this fraction over half a power step. Each half step divides the error
-    /// by the fourth power of the ratio of a value to the first one outside the block, so what is left is far smaller.
+    /// Stop when no kept singular value is expected to change by more than this fraction any more. The changes over half power steps
+    /// shrink geometrically; what is left after two of them, d1 and then d2, is about d2 * d2 / d1.
     /// </summary>
-    public double Tolerance { get; init; } = 1e-8;
+    public double Tolerance { get; init; } = 1e-9;
 
     /// <summary>A kept value this close, in vectors, to the end of its sector's block makes the block grow.</summary>
     public int Margin { get; init; } = 4;

@@ -19,20 +19,20 @@ public sealed class TensorMap<T> : ILinearMap<T>, IDisposable
 
     /// <summary>Reads a tensor as a matrix.</summary>
     /// <param name="kernels">Dense kernels.</param>
-    /// <param name="tensor">A tensor without flux; it must not be disposed before the map.</param>
+    /// <param name="tensor">A tensor without flux; without <paramref name="copy"/> it must not be disposed before the map.</param>
     /// <param name="rowAxes">Legs that make the rows.</param>
     /// <param name="columnAxes">The other legs.</param>
+    /// <param name="copy">Whether the map always keeps elements of its own.</param>
     /// <exception cref="ArgumentException">The tensor has flux.</exception>
-    public TensorMap(IKernels<T> kernels, Tensor<T> tensor, ReadOnlySpan<int> rowAxes, ReadOnlySpan<int> columnAxes)
+    public TensorMap(IKernels<T> kernels, Tensor<T> tensor, ReadOnlySpan<int> rowAxes, ReadOnlySpan<int> columnAxes, bool copy = false)
     {
         ArgumentNullException.ThrowIfNull(kernels);
         ArgumentNullException.ThrowIfNull(tensor);
         if (tensor.Flux != Charge.Zero)
             throw new ArgumentException("Only a tensor without flux can be decomposed.", nameof(tensor));
         _kernels = kernels;
-        _matrix = BlockMatrix<T>.From(tensor, rowAxes, columnAxes);
-        int[] rows = [.. rowAxes], columns = [.. columnAxes];
-        _turned = new Lazy<BlockMatrix<T>>(() => BlockMatrix<T>.From(tensor, columns, rows, copy: true));
+        _matrix = BlockMatrix<T>.From(tensor, rowAxes, columnAxes, copy);
+        _turned = new Lazy<BlockMatrix<T>>(_matrix.Turned);
     }
 
     /// <inheritdoc/>

@@ -38,6 +38,19 @@ public interface IKernels<T>
     }
 
     /// <summary>
+    /// Runs independent pieces of work that each call kernels, on as many threads as these kernels have. Kernels called
+    /// from a piece stay on its thread. The default runs one piece after the other.
+    /// </summary>
+    /// <param name="parts">Number of pieces.</param>
+    /// <param name="body">Does piece i, from 0 to parts - 1.</param>
+    void RunEach(int parts, Action<int> body)
+    {
+        ArgumentNullException.ThrowIfNull(body);
+        for (int i = 0; i < parts; i++)
+            body(i);
+    }
+
+    /// <summary>
     /// Thin QR in place: A (m x n, m >= n) = Q R with Q^H Q = 1 to round-off, R upper triangular with real
     /// non-negative diagonal. A rank-deficient A still gives orthonormal Q.
     /// </summary>

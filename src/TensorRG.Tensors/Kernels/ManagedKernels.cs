@@ -41,6 +41,9 @@ public sealed class ManagedKernels<T>(Workers workers, SimdPath path) : IKernels
     }
 
     /// <inheritdoc/>
+    public void RunEach(int parts, Action<int> body) => Workers.Run(parts, body);
+
+    /// <inheritdoc/>
     /// <exception cref="ArgumentException">A has fewer rows than columns.</exception>
     /// <exception cref="DecompositionException">A holds a NaN or infinity.</exception>
     public void OrthogonalFactor(MatrixView<T> a, MatrixView<T> r) => ThinQr.Factor(this, a, r);
