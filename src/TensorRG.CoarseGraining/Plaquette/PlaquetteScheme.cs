@@ -100,7 +100,10 @@ internal sealed class PlaquetteScheme<T>(TensorAlgebra<T> algebra, SchemeSetting
     private RingMap<T> Ring(NetworkState<T> state, ReadOnlySpan<string> names)
         => new(algebra, state[names[0]], state[names[1]], state[names[2]], state[names[3]]);
 
-    /// <summary>The two decompositions know nothing of each other: while their matrices are small, each has a thread.</summary>
+    /// <summary>
+    /// The two decompositions know nothing of each other: while their matrices are small, each has a thread. Large ones take
+    /// turns, for the sake of memory.
+    /// </summary>
     private (TruncatedSvd<T> First, TruncatedSvd<T> Second) DecomposeBoth(NetworkState<T> state, int step)
     {
         string[][] names = [[NorthWest, NorthEast, SouthEast, SouthWest], [NorthEast, SouthEast, SouthWest, NorthWest]];

@@ -14,80 +14,66 @@ namespace TensorRG.CoarseGraining.Plaquette;
 internal sealed class RingMap<T> : ILinearMap<T>, IDisposable
     where T : unmanaged, INumberBase<T>
 {
-    /// <summary>Most elements of the largest intermediate of a batch of vectors.</summary>
-    private const long BatchElements = 1 << 21;
+    /// <summary>Vectors that go round the ring together.</summary>
+    private const int Batch = 32;
 
-    private readonly TensorAlgebra<T> _algebra;
-    private readonly Tensor<T>[] _pieces;
-    private readonly Tensor<T>[] _conjugates;
-    private readonly Tensor<T>[] _turned;
-    private readonly Tensor<T>[] _turnedConjugates;
+    private readonly RingHalf<T>[] _forward;
+    private readonly RingHalf<T>[] _backward;
+    private readonly Func<Tensor<T>> _toTensor;
 
     public RingMap(TensorAlgebra<T> algebra, Tensor<T> a, Tensor<T> b, Tensor<T> c, Tensor<T> d)
     {
-        _algebra = algebra;
-        _pieces = [a, b, c, d];
-        _conjugates = Array.ConvertAll(_pieces, static p => p.Conjugate());
-        _turned = [a.Permute(0, 2, 1), d.Permute(2, 1, 0)];
-        _turnedConjugates = [_conjugates[2].Permute(0, 2, 1), _conjugates[1].Permute(2, 1, 0)];
         RowLegs = [a.Legs[0], b.Legs[0]];
         ColumnLegs = [c.Legs[0], d.Legs[0]];
+        using Tensor<T> conjugateA = a.Conjugate(), conjugateB = b.Conjugate(), conjugateC = c.Conjugate(), conjugateD = d.Conjugate();
+        _forward = Halves(algebra, a, b, c, d);
+        _backward = Halves(algebra, conjugateC, conjugateD, conjugateA, conjugateB);
+        _toTensor = () => Close(algebra, a, b, c, d);
     }
 
     public ImmutableArray<Leg> RowLegs { get; }
 
     public ImmutableArray<Leg> ColumnLegs { get; }
 
-    public Tensor<T> Apply(Tensor<T> block)
-        => Batched(block, RowLegs, batch => Ring(_turned, _pieces[1], _pieces[2], batch));
+    public Tensor<T> Apply(Tensor<T> block) => Batched(block, RowLegs, _forward);
 
-    public Tensor<T> ApplyAdjoint(Tensor<T> block)
-        => Batched(
-            block,
-            [ColumnLegs[0].Dual, ColumnLegs[1].Dual],
-            batch => Ring(_turnedConjugates, _conjugates[3], _conjugates[0], batch));
+    public Tensor<T> ApplyAdjoint(Tensor<T> block) => Batched(block, [ColumnLegs[0].Dual, ColumnLegs[1].Dual], _backward);
 
-    public Tensor<T> ToTensor()
-    {
-        using Tensor<T> left = _algebra.Contract(_pieces[0], [2], _pieces[1], [1]);
-        using Tensor<T> right = _algebra.Contract(_pieces[2], [2], _pieces[3], [1]);
-        return _algebra.Contract(left, [1, 3], right, [3, 1]);
-    }
+    public Tensor<T> ToTensor() => _toTensor();
 
     public void Dispose()
     {
-        foreach (Tensor<T> own in (Tensor<T>[])[.. _conjugates, .. _turned, .. _turnedConjugates])
-            own.Dispose();
+        foreach (RingHalf<T> half in (RingHalf<T>[])[.. _forward, .. _backward])
+            half.Dispose();
     }
 
-    /// <summary>
-    /// [a, b, x] from [c*, d*, x]. The first and last piece come as [a, s1, s0] and [s0, s3, d], in the order in which their inner legs
-    /// lie in what they multiply, so that the large intermediates are read where they are.
-    /// </summary>
-    private Tensor<T> Ring(Tensor<T>[] turned, Tensor<T> b, Tensor<T> c, Tensor<T> block)
+    /// <summary>From [c*, d*, x] over C and D to [s2, s0, x], then over B and A to [b, a, x].</summary>
+    private static RingHalf<T>[] Halves(TensorAlgebra<T> algebra, Tensor<T> a, Tensor<T> b, Tensor<T> c, Tensor<T> d)
     {
-        using Tensor<T> first = _algebra.Contract(c, [0], block, [0]);
-        using Tensor<T> second = _algebra.ContractMiddle(turned[1], first);
-        using Tensor<T> third = _algebra.Contract(b, [2], second, [0]);
-        using Tensor<T> fourth = _algebra.ContractMiddle(turned[0], third);
-        return fourth.Permute(1, 0, 2);
+        using Tensor<T> first = c.Permute(1, 2, 0), last = d.Permute(2, 1, 0), closing = a.Permute(0, 2, 1);
+        return [new RingHalf<T>(algebra, first, last, Batch), new RingHalf<T>(algebra, b, closing, Batch)];
     }
 
-    private Tensor<T> Batched(Tensor<T> block, ImmutableArray<Leg> rows, Func<Tensor<T>, Tensor<T>> apply)
+    private static Tensor<T> Close(TensorAlgebra<T> algebra, Tensor<T> a, Tensor<T> b, Tensor<T> c, Tensor<T> d)
+    {
+        using Tensor<T> left = algebra.Contract(a, [2], b, [1]);
+        using Tensor<T> right = algebra.Contract(c, [2], d, [1]);
+        return algebra.Contract(left, [1, 3], right, [3, 1]);
+    }
+
+    private static Tensor<T> Batched(Tensor<T> block, ImmutableArray<Leg> rows, RingHalf<T>[] halves)
     {
         Leg vectors = block.Legs[2];
-        long perVector = (long)_pieces.Max(static p => p.Legs[1].Dimension) * _pieces.Max(static p => p.Legs[2].Dimension) * _pieces.Max(static p => p.Legs[0].Dimension);
-        int batch = (int)Math.Clamp(BatchElements / Math.Max(perVector, 1), 8, int.MaxValue);
-        if (vectors.Dimension <= batch)
-            return apply(block);
         Tensor<T> result = Tensor<T>.Zeros([.. rows, vectors]);
         for (int sector = 0; sector < vectors.Sectors.Length; sector++)
         {
-            for (int start = 0; start < vectors.Sectors[sector].Dimension; start += batch)
+            for (int start = 0; start < vectors.Sectors[sector].Dimension; start += Batch)
             {
-                int count = Math.Min(batch, vectors.Sectors[sector].Dimension - start);
+                int count = Math.Min(Batch, vectors.Sectors[sector].Dimension - start);
                 using Tensor<T> slice = block.Slice(2, sector, start, count);
-                using Tensor<T> moved = apply(slice);
+                using Tensor<T> middle = halves[0].Apply(slice);
+                using Tensor<T> end = halves[1].Apply(middle);
+                using Tensor<T> moved = end.Permute(1, 0, 2);
                 result.Assign(2, sector, start, moved);
             }
         }

@@ -176,7 +176,8 @@ internal sealed class SubspaceIteration<T>
     /// <summary>Vectors for a sector that keeps a number of them: a multiple of eight, the width of a tile of the matrix product.</summary>
     private int BlockSize(Charge charge, int kept)
     {
-        int extra = Math.Max(_options.MinOversampling, (_options.Oversampling + _limits.Count - 1) / _limits.Count);
+        int wanted = Math.Max(_options.Oversampling, (int)(_options.OversamplingFraction * _rule.MaxDimension));
+        int extra = Math.Max(_options.MinOversampling, (wanted + _limits.Count - 1) / _limits.Count);
         return Math.Min(_limits[charge], (kept + extra + 7) / 8 * 8);
     }
 

@@ -6,6 +6,12 @@ public sealed record SubspaceOptions
     /// <summary>Vectors iterated beyond those expected to be kept, shared out over the sectors.</summary>
     public int Oversampling { get; init; } = 20;
 
+    /// <summary>
+    /// The same as a fraction of the bond dimension; the larger of the two counts. Spectra get flatter with the bond dimension: a fixed
+    /// number of extra vectors would need ever more power steps.
+    /// </summary>
+    public double OversamplingFraction { get; init; } = 0.5;
+
     /// <summary>Fewest such vectors in a sector.</summary>
     public int MinOversampling { get; init; } = 8;
 
