@@ -79,7 +79,7 @@ public sealed class OutputTests : IDisposable
     {
         string[] args = ["run", "potts", "--set", "q=3", "--json", "--bond-dimension", "9", "--steps", "12"];
         JsonObject first = Run(args).Expect(0).Json;
-        RunFiles run = new((string)first["run"]!);
+        RunFiles run = new(_folder.Sub((string)first["run"]!));
         Dictionary<string, byte[]> before = run.Content();
         DateTime written = File.GetLastWriteTimeUtc(run.Result);
         JsonObject second = Run(args).Expect(0).Json;
@@ -95,7 +95,7 @@ public sealed class OutputTests : IDisposable
     public void Stored_result_holds_the_numbers_that_are_printed()
     {
         JsonObject json = Run("run", "clock", "--set", "q=4", "--json", "--bond-dimension", "8", "--steps", "10").Expect(0).Json;
-        JsonNode stored = JsonNode.Parse(File.ReadAllText(new RunFiles((string)json["run"]!).Result))!["result"]!;
+        JsonNode stored = JsonNode.Parse(File.ReadAllText(new RunFiles(_folder.Sub((string)json["run"]!)).Result))!["result"]!;
         foreach (string name in (string[])["logZPerSite", "logZPerSiteError", "freeEnergyPerSite", "degeneracyRatio"])
             Assert.Equal(Number(json, name), Number(stored, name));
     }
@@ -120,7 +120,7 @@ public sealed class OutputTests : IDisposable
     {
         string[] args = ["run", "ising", "--json", "--bond-dimension", "6", "--steps", "8", "--temperature", "2.5"];
         JsonObject plain = Run(args).Expect(0).Json;
-        Directory.Delete((string)plain["run"]!, recursive: true);
+        Directory.Delete(_folder.Sub((string)plain["run"]!), recursive: true);
         Dictionary<string, string> environment = new() { ["LANG"] = language, ["LC_ALL"] = language };
         using CommandLineProcess process = CommandLineProcess.Start(_folder.Path, args, environment);
         Assert.Equal(Without(plain, "seconds"), Without(process.End().Expect(0).Json, "seconds"));

@@ -201,7 +201,7 @@ internal sealed class SubspaceIteration<T>
     {
         double earlier = LargestChange(first, second), later = LargestChange(second, third);
         double left = later * Math.Min(1, later / Math.Max(earlier, double.Epsilon));
-        return left <= _options.Tolerance;
+        return left <= _options.Tolerance / 4;
     }
 
     /// <summary>The largest relative change of a kept value, round-off of the largest value apart.</summary>

@@ -22,10 +22,11 @@ public sealed record SubspaceOptions
     public int MaxPowerSteps { get; init; } = 8;
 
     /// <summary>
-    /// Stop when no kept singular value is expected to change by more than this fraction any more. The changes over half power steps
-    /// shrink geometrically; what is left after two of them, d1 and then d2, is about d2 * d2 / d1.
+    /// Largest relative error of a kept singular value. The changes over half power steps shrink geometrically: what is left after two
+    /// of them, d1 and then d2, is about d2 * d2 / d1. A quarter of the tolerance is asked of that, since the slowest
+    /// part shrinks last.
     /// </summary>
-    public double Tolerance { get; init; } = 1e-9;
+    public double Tolerance { get; init; } = 1e-8;
 
     /// <summary>A kept value this close, in vectors, to the end of its sector's block makes the block grow.</summary>
     public int Margin { get; init; } = 4;
