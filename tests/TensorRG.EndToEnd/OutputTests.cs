@@ -54,6 +54,17 @@ public sealed class OutputTests : IDisposable
     }
 
     [Fact]
+    public void Plot_draws_the_flow_into_the_run_folder()
+    {
+        ProcessOutcome run = Run("run", "ising", "--bond-dimension", "8", "--run", "drawn", "--plot", "--quiet").Expect(0);
+        Assert.Contains(Path.Combine("drawn", "flow.png"), run.Out, StringComparison.Ordinal);
+        Assert.Equal("svg", XDocument.Load(_folder.Sub(Path.Combine("drawn", "flow.svg"))).Root!.Name.LocalName);
+        byte[] signature = [0x89, 0x50, 0x4E, 0x47];
+        Assert.Equal(signature, File.ReadAllBytes(_folder.Sub(Path.Combine("drawn", "flow.png")))[..4]);
+        Run("resume", "drawn", "--plot", "--json").Expect(0);
+    }
+
+    [Fact]
     public void Where_nothing_is_known_exactly_json_says_null()
     {
         JsonObject json = Run("run", "ising", "--json", "--bond-dimension", "4", "--set", "h=0.1", "--temperature", "2", "--steps", "10").Expect(0).Json;

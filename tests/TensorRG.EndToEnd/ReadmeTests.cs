@@ -62,12 +62,22 @@ public sealed partial class ReadmeTests
     {
         text = Times().Replace(text, "TIME");
         text = Processor().Replace(text, "PROCESSOR");
+        text = Noise().Replace(text, "NOISE");
+        text = LastDigits().Replace(text, "$1");
         text = JsonMachine().Replace(text, "$1 MACHINE");
         return Spaces().Replace(text, " ");
     }
 
     [GeneratedRegex(@"\b\d+(\.\d+)? (ms|s|min|h)\b( \d+ (s|min))?|(?<=\s)-(?=\n)")]
     private static partial Regex Times();
+
+    /// <summary>Numbers of round-off size, which may differ between processors and mathematical libraries.</summary>
+    [GeneratedRegex(@"-?\d+(\.\d+)?[eE]-(1[3-9]|[2-9]\d)\b")]
+    private static partial Regex Noise();
+
+    /// <summary>Decimals after the twelfth, for the same reason.</summary>
+    [GeneratedRegex(@"(\.\d{12})\d+")]
+    private static partial Regex LastDigits();
 
     [GeneratedRegex(@"managed SIMD kernels, [\w-]+, \d+ thread\(s\)")]
     private static partial Regex Processor();

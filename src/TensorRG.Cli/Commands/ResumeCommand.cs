@@ -15,17 +15,18 @@ internal static class ResumeCommand
         Argument<string> folder = TextInput.Required("dir", "Folder of the run.");
         Option<int> threads = new FlowOptions().Threads;
         (Option<bool> json, Option<bool> quiet) = OutputOptions.Create();
+        Option<bool> plot = OutputOptions.Plot();
         command.Arguments.Add(folder);
-        foreach (Option option in (Option[])[threads, json, quiet])
+        foreach (Option option in (Option[])[threads, plot, json, quiet])
             command.Options.Add(option);
         command.SetAction(result => Resume(
-            result.GetRequiredValue(folder), result.GetRequiredValue(threads), OutputOptions.Read(result, json, quiet)));
+            result.GetRequiredValue(folder), result.GetRequiredValue(threads), OutputOptions.Read(result, json, quiet), result.GetValue(plot)));
         return command;
     }
 
-    private static int Resume(string path, int threads, OutputMode mode)
+    private static int Resume(string path, int threads, OutputMode mode, bool plot)
     {
         RunFolder folder = RunLocation.Open(path);
-        return RunCommand.Finish(folder, BackendChoice.Create(folder.Inputs.Backend, threads), threads, mode);
+        return RunCommand.Finish(folder, BackendChoice.Create(folder.Inputs.Backend, threads), threads, mode, plot);
     }
 }

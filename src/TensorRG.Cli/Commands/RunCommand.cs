@@ -22,8 +22,9 @@ internal static class RunCommand
         bondDimension.Aliases.Add("-c");
         Option<string> run = TextInput.Folder("--run", "Folder of the run. Default: results/runs/ and a name made of the inputs.");
         (Option<bool> json, Option<bool> quiet) = OutputOptions.Create();
+        Option<bool> plot = OutputOptions.Plot();
         flow.AddTo(command);
-        foreach (Option option in (Option[])[bondDimension, run, json, quiet])
+        foreach (Option option in (Option[])[bondDimension, run, plot, json, quiet])
             command.Options.Add(option);
         command.SetAction(result =>
         {
@@ -33,13 +34,13 @@ internal static class RunCommand
             RunInputs inputs = request.Inputs(result.GetRequiredValue(bondDimension));
             Backend backend = BackendChoice.Create(request.Backend, request.Threads);
             string path = result.GetValue(run) ?? RunLocation.For(inputs);
-            return Finish(RunLocation.OpenOrCreate(path, inputs), backend, request.Threads, mode);
+            return Finish(RunLocation.OpenOrCreate(path, inputs), backend, request.Threads, mode, result.GetValue(plot));
         });
         return command;
     }
 
     /// <summary>Runs a folder to its end and prints the result.</summary>
-    public static int Finish(RunFolder folder, Backend backend, int threads, OutputMode mode)
+    public static int Finish(RunFolder folder, Backend backend, int threads, OutputMode mode, bool plot)
     {
         using var signal = new StopSignal();
         RunReport? report = RunExecutor.Execute(folder, backend, threads, OutputOptions.Display(mode), signal.Token);
@@ -49,6 +50,7 @@ internal static class RunCommand
             return ExitCode.Stopped;
         }
 
+        IReadOnlyList<string> figures = plot ? FlowFigure.Write(report) : [];
         if (mode == OutputMode.Json)
         {
             Console.Out.Write(JsonText.Write(SummaryJson.Of(report)));
@@ -57,7 +59,7 @@ internal static class RunCommand
 
         if (mode == OutputMode.Full)
             Consoles.Out.WriteLine();
-        SummaryText.Write(Consoles.Out, report);
+        SummaryText.Write(Consoles.Out, report, figures);
         return ExitCode.Done;
     }
 }

@@ -10,6 +10,11 @@ internal static class OutputOptions
         new Option<bool>("--json") { Description = "Print one JSON object and nothing else." },
         new Option<bool>("--quiet", "-q") { Description = "Print the summary alone, without the table of steps." });
 
+    public static Option<bool> Plot() => new("--plot")
+    {
+        Description = "Also draw X and the transfer-matrix levels against the length: flow.svg and flow.png in the run's folder.",
+    };
+
     /// <exception cref="UsageException">Both are given.</exception>
     public static OutputMode Read(ParseResult result, Option<bool> json, Option<bool> quiet)
     {

@@ -8,7 +8,7 @@ namespace TensorRG.Cli.Output;
 /// <summary>The result of a run as people read it.</summary>
 internal static class SummaryText
 {
-    public static void Write(IAnsiConsole console, RunReport report)
+    public static void Write(IAnsiConsole console, RunReport report, IReadOnlyList<string> figures)
     {
         FlowSummary summary = report.Summary;
         console.WriteLine(ModelLine.Of(report.Parameters));
@@ -25,6 +25,8 @@ internal static class SummaryText
         Row(grid, "X", FormattableString.Invariant($"{summary.DegeneracyRatio:0.0000}"));
         Row(grid, "phase", summary.Phase.Summary);
         Row(grid, "run", ShownPath.Of(report.Folder.Path));
+        if (figures.Count > 0)
+            Row(grid, "figures", string.Join('\n', figures));
         console.Write(grid);
     }
 
