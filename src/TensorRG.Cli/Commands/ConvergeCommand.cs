@@ -42,7 +42,7 @@ internal static class ConvergeCommand
             RunInputs inputs = request.Inputs(bondDimension);
             string path = into is null ? RunLocation.For(inputs) : Path.Combine(into, FormattableString.Invariant($"chi{bondDimension}"));
             RunReport? report = RunExecutor.Execute(
-                RunLocation.OpenOrCreate(path, inputs), backend, request.Threads, OutputOptions.Display(OutputMode.Quiet), signal.Token);
+                RunLocation.OpenOrCreate(path, inputs), backend, request.Threads, OutputOptions.Display(mode, FormattableString.Invariant($"chi = {bondDimension}")), signal.Token);
             if (report is null)
             {
                 Consoles.Error.WriteLine("Stopped. The same command goes on from here.");

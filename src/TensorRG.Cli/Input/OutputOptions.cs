@@ -25,6 +25,8 @@ internal static class OutputOptions
         return result.GetValue(quiet) ? OutputMode.Quiet : OutputMode.Full;
     }
 
-    public static IStepDisplay Display(OutputMode mode)
-        => mode == OutputMode.Full ? new LiveDisplay(Consoles.Out) : new SilentDisplay(Consoles.Error);
+    /// <param name="mode">How much is printed.</param>
+    /// <param name="label">Name of one run among many, whose steps are not listed; null for a run on its own.</param>
+    public static IStepDisplay Display(OutputMode mode, string? label = null)
+        => mode == OutputMode.Full ? new LiveDisplay(Consoles.Out, label) : new SilentDisplay(Consoles.Error);
 }

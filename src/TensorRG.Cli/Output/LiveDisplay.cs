@@ -11,7 +11,8 @@ namespace TensorRG.Cli.Output;
 /// it will take; it is overwritten and leaves no trace.
 /// </summary>
 /// <param name="console">Where to.</param>
-internal sealed class LiveDisplay(IAnsiConsole console) : IStepDisplay
+/// <param name="label">For one run among many: its name in the last line, and no table. Null for a run on its own.</param>
+internal sealed class LiveDisplay(IAnsiConsole console, string? label = null) : IStepDisplay
 {
     private readonly bool _hasStatus = console.Profile.Capabilities.Interactive && console.Profile.Capabilities.Ansi;
     private readonly List<(int Step, long Time)> _times = [];
@@ -23,11 +24,8 @@ internal sealed class LiveDisplay(IAnsiConsole console) : IStepDisplay
         _steps = steps;
         foreach (string notice in start.Notices)
             console.WriteLine(notice);
-        if (start.Step > 0)
-            console.WriteLine(FormattableString.Invariant($"Resumed after step {start.Step}."));
-        console.WriteLine(StepLine.Header);
-        foreach (StepRecord record in start.Records)
-            WriteLine(record);
+        if (label is null)
+            StartTable(start);
         Mark(start.Step);
         Status(start.Step);
     }
@@ -35,12 +33,22 @@ internal sealed class LiveDisplay(IAnsiConsole console) : IStepDisplay
     public void Show(StepRecord record)
     {
         ClearStatus();
-        WriteLine(record);
+        if (label is null)
+            WriteLine(record);
         Mark(record.Step);
         Status(record.Step);
     }
 
     public void Dispose() => ClearStatus();
+
+    private void StartTable(RunStart start)
+    {
+        if (start.Step > 0)
+            console.WriteLine(FormattableString.Invariant($"Resumed after step {start.Step}."));
+        console.WriteLine(StepLine.Header);
+        foreach (StepRecord record in start.Records)
+            WriteLine(record);
+    }
 
     private void WriteLine(StepRecord record)
     {
@@ -60,7 +68,7 @@ internal sealed class LiveDisplay(IAnsiConsole console) : IStepDisplay
         if (!_hasStatus || step >= _steps)
             return;
         string left = _times.Count < 2 ? "" : ", about " + NumberFormat.Duration(Left(step)) + " left";
-        console.Write(new Text(FormattableString.Invariant($"step {step} of {_steps}{left}, Ctrl+C stops after this step"), new Style(decoration: Decoration.Dim)));
+        console.Write(new Text(FormattableString.Invariant($"{(label is null ? "" : label + ": ")}step {step} of {_steps}{left}, Ctrl+C stops after this step"), new Style(decoration: Decoration.Dim)));
     }
 
     private double Left(int step)

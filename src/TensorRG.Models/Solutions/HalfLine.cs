@@ -1,3 +1,5 @@
+using TensorRG.Tensors;
+
 namespace TensorRG.Models.Solutions;
 
 /// <summary>
@@ -20,6 +22,6 @@ internal static class HalfLine
             double y = Math.Exp(t - Math.Exp(-t));
             sum.Add(Step * y * (1 + Math.Exp(-t)) * integrand(y));
         }
-        return sum.Total;
+        return sum.Value;
     }
 }

@@ -1,3 +1,5 @@
+using TensorRG.Tensors;
+
 namespace TensorRG.Models.Solutions;
 
 /// <summary>
@@ -44,7 +46,7 @@ public static class Kaufman
             cosh.Add(Elementary.Log1P(Math.Exp(-decay)));
             sinh.Add(Math.Log(-Elementary.ExpM1(-decay)));
         }
-        return (logs.Total / lx, Math.Exp(cosh.Total), Math.Exp(sinh.Total));
+        return (logs.Value / lx, Math.Exp(cosh.Value), Math.Exp(sinh.Value));
     }
 
     private static void Check(int lx, int ly, double temperature, double jx, double jy)

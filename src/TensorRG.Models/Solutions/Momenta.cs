@@ -1,3 +1,5 @@
+using TensorRG.Tensors;
+
 namespace TensorRG.Models.Solutions;
 
 /// <summary>
@@ -26,7 +28,7 @@ internal static class Momenta
             first.Add(weight * f.First);
             second.Add(weight * f.Second);
         }
-        return new Jet(value.Total, first.Total, second.Total);
+        return new Jet(value.Value, first.Value, second.Value);
     }
 
     private static (double OneMinusCosine, double Weight) Node(double t)

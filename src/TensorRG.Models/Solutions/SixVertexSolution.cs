@@ -1,3 +1,5 @@
+using TensorRG.Tensors;
+
 namespace TensorRG.Models.Solutions;
 
 /// <summary>
@@ -67,6 +69,6 @@ internal static class SixVertexSolution
             double x = m * lambda;
             sum.Add(Math.Exp((rho - 2) * x) * -Elementary.ExpM1(-2 * rho * x) / ((1 + Math.Exp(-2 * x)) * m));
         }
-        return sum.Total;
+        return sum.Value;
     }
 }
