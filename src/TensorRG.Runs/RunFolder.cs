@@ -128,8 +128,19 @@ public sealed class RunFolder
     internal static RunFolder OpenOrCreate(
         IRunFiles files, string path, RunInputs inputs, IReadOnlyDictionary<string, string>? labels)
     {
-        if (!files.FileExists(System.IO.Path.Combine(System.IO.Path.GetFullPath(path), RunFiles.Run)))
-            return Create(files, path, inputs, labels);
+        string header = System.IO.Path.Combine(System.IO.Path.GetFullPath(path), RunFiles.Run);
+        if (!files.FileExists(header))
+        {
+            try
+            {
+                return Create(files, path, inputs, labels);
+            }
+            catch (RunStoreException refused) when (refused.Problem == RunStoreProblem.NotARun && files.FileExists(header))
+            {
+                // Another process made the run since we looked.
+            }
+        }
+
         inputs.Validate();
         RunFolder run = Open(files, path);
         return run.Inputs == inputs ? run : throw new RunStoreException(

@@ -44,6 +44,17 @@ public sealed class RunFolderTests : IDisposable
     }
 
     [Fact]
+    public void Run_that_another_process_makes_meanwhile_is_opened()
+    {
+        string folder = _folder.Sub("raced");
+        var files = new InterruptedFiles(new DiskFiles(), () => RunFolder.Create(folder, Sample.Inputs()));
+        Assert.Equal(Sample.Inputs(), RunFolder.OpenOrCreate(files, folder, Sample.Inputs(), null).Inputs);
+        string other = _folder.Sub("raced by other inputs");
+        files = new InterruptedFiles(new DiskFiles(), () => RunFolder.Create(other, Sample.Inputs(steps: 9)));
+        AssertProblem(RunStoreProblem.OtherInputs, "steps is 9", () => RunFolder.OpenOrCreate(files, other, Sample.Inputs(), null));
+    }
+
+    [Fact]
     public void Run_is_not_created_over_anything()
     {
         RunFolder.Create(_folder.Sub("a"), Sample.Inputs());
