@@ -124,14 +124,6 @@ public sealed class Tensor<T> : IDisposable
         return new Tensor<T>(legs, flux, layout, buffer);
     }
 
-    /// <summary>Takes over the memory of another tensor under other legs of the same layout (directions and flux may differ).</summary>
-    internal Tensor<T> Reinterpret(ImmutableArray<Leg> legs, Charge flux)
-    {
-        var layout = new BlockLayout(legs, flux);
-        System.Diagnostics.Debug.Assert(layout.TotalSize == StoredCount && layout.Count == BlockCount, "layouts differ");
-        return new Tensor<T>(legs, flux, layout, _buffer);
-    }
-
     /// <summary>Walks over all stored elements: storage position, position within the block, block. The arrays are reused.</summary>
     internal IEnumerable<(long At, int[] Local, int Block)> Positions()
     {

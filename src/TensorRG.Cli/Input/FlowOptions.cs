@@ -39,7 +39,7 @@ internal sealed class FlowOptions
 
     public Option<string> Grading { get; } = OneOf("--grading", "Whether tensors are block-sparse by the model's symmetry: same numbers, less time.", "on", "on", "off");
 
-    public Option<string> Decomposition { get; } = OneOf("--decomposition", "How singular values are found: 'iterative' never forms a four-leg tensor, 'full' decomposes it completely (slow, for checks).", "auto", "auto", "iterative", "full");
+    public Option<string> Decomposition { get; } = OneOf("--decomposition", "How singular values are found: 'iterative' keeps to rings of three-leg pieces unless the tensor is small or its spectrum too slow, 'full' decomposes the tensor completely (slow, for checks).", "auto", "auto", "iterative", "full");
 
     public Option<double?> BondExponent { get; } = NumberOption.Real("--bond-exponent", "Exponent k of the bond weights; bond-weighted scheme only. Error bars are calibrated for the default of -0.5.", -1, 0.5);
 
@@ -51,7 +51,6 @@ internal sealed class FlowOptions
 
     public void AddTo(Command command)
     {
-        Set.Validators.Clear();
         foreach (Option option in (Option[])[Temperature, Set, Scheme, Steps, Cut, Grading, Decomposition, BondExponent, Seed, Threads, Backend])
             command.Options.Add(option);
         command.Arguments.Add(Model);

@@ -55,7 +55,7 @@ public static class GradedQr
     private static void Factor<T>(IKernels<T> kernels, MatrixView<T> a, MatrixView<T> q, MatrixView<T> r)
         where T : unmanaged, INumberBase<T>
     {
-        Copy(a.Slice(0, 0, a.Rows, q.Columns), q);
+        SvdAssembly.CopyColumns(a.Slice(0, 0, a.Rows, q.Columns), q);
         if (a.Rows >= a.Columns)
         {
             kernels.OrthogonalFactor(q, r);
@@ -64,15 +64,5 @@ public static class GradedQr
 
         kernels.OrthogonalFactor(q, r.Slice(0, 0, q.Columns, q.Columns));
         kernels.Multiply(q.Adjoint, a, r, accumulate: false);
-    }
-
-    private static void Copy<T>(MatrixView<T> source, MatrixView<T> target)
-        where T : unmanaged, INumberBase<T>
-    {
-        for (int i = 0; i < source.Rows; i++)
-        {
-            for (int j = 0; j < source.Columns; j++)
-                target[i, j] = source[i, j];
-        }
     }
 }
