@@ -52,9 +52,10 @@ internal sealed class KillCampaign : IDisposable
         int[] before = run.Steps;
         bool wasFinished = run.IsFinished;
         ProcessOutcome end = CommandLineProcess.Run(_folder.Path, Command(run, threads: 2)).Expect(0);
-        if (!wasFinished && before.Length > 0)
+        if (!wasFinished && before.Length > 0 && before[^1] > 0)
         {
-            // Computing everything again would give the same bits, and be no resume.
+            // Computing everything again would give the same bits, and be no resume. (SIGTERM before the first step leaves
+            // a checkpoint of step 0, from which there is nothing to save.)
             Assert.Contains(string.Create(CultureInfo.InvariantCulture, $"Resumed after step {before[^1]}."), end.Out, StringComparison.Ordinal);
             Resumed++;
         }
