@@ -1,4 +1,5 @@
 using System.Collections.Immutable;
+using TensorRG.Models.Lattices;
 
 namespace TensorRG.Models;
 
@@ -85,6 +86,13 @@ public abstract class Model
         return graded ? network : network.Ungraded();
     }
 
+    /// <summary>
+    /// The model as tables of local weights and observables: what can be measured, and what any sum over configurations needs.
+    /// Null for a model that is given by its network alone.
+    /// </summary>
+    /// <param name="parameters">A set of this model.</param>
+    public LatticeSystem? System(ParameterSet parameters) => DescribeSystem(Own(parameters));
+
     /// <summary>An exact value, or null where none is known.</summary>
     /// <param name="quantity">Which quantity.</param>
     /// <param name="parameters">A set of this model.</param>
@@ -111,6 +119,10 @@ public abstract class Model
     /// <summary>The graded network; the set is known to be this model's.</summary>
     /// <param name="parameters">A set of this model.</param>
     protected abstract VertexNetwork BuildNetwork(ParameterSet parameters);
+
+    /// <summary>See <see cref="System"/>; the set is known to be this model's.</summary>
+    /// <param name="parameters">A set of this model.</param>
+    protected virtual LatticeSystem? DescribeSystem(ParameterSet parameters) => null;
 
     /// <summary>See <see cref="Exact"/>; the set is known to be this model's.</summary>
     /// <param name="quantity">Which quantity.</param>

@@ -12,10 +12,11 @@ public sealed partial class LayeringTests
         ["Tensors"] = [],
         ["Models"] = ["Tensors"],
         ["CoarseGraining"] = ["Tensors"],
-        ["Physics"] = ["Tensors", "Models", "CoarseGraining"],
-        ["Runs"] = ["Tensors", "Models", "CoarseGraining", "Physics"],
-        ["Reports"] = ["Tensors", "Models", "CoarseGraining", "Physics"],
-        ["Cli"] = ["Tensors", "Models", "CoarseGraining", "Physics", "Runs", "Reports"],
+        ["Boundary"] = ["Tensors"],
+        ["Physics"] = ["Tensors", "Models", "CoarseGraining", "Boundary"],
+        ["Runs"] = ["Tensors", "Models", "CoarseGraining", "Boundary", "Physics"],
+        ["Reports"] = ["Tensors", "Models", "CoarseGraining", "Boundary", "Physics"],
+        ["Cli"] = ["Tensors", "Models", "CoarseGraining", "Boundary", "Physics", "Runs", "Reports"],
     };
 
     /// <summary>What other rooms may use of the kernels' namespace: choosing a backend, and its failures.</summary>
