@@ -15,6 +15,12 @@ public sealed class Flow<T> : IFlow
     /// <summary>How far from 1 round-off may leave the norm of a restored transfer matrix.</summary>
     private const double NormTolerance = 1e-9;
 
+    /// <summary>
+    /// Steps over which a transfer matrix may be exactly zero: a ring of one vertex may have no allowed configuration (neighbours that must
+    /// differ) though longer rings have many.
+    /// </summary>
+    private const int LongestZero = 3;
+
     private readonly IScheme<T> _scheme;
     private readonly InitialNetwork<T> _network;
     private readonly List<StepRecord> _records = [];
@@ -95,7 +101,7 @@ public sealed class Flow<T> : IFlow
             if (!BondProfile.Of(vertical).SequenceEqual(record.VerticalBond) || !BondProfile.Of(horizontal).SequenceEqual(record.HorizontalBond))
                 throw new SnapshotException("The bonds of the snapshot's tensors are not those of its last record.");
             double norm = TensorAlgebra<T>.Norm(_scheme.TransferMatrix(state));
-            return Math.Abs(norm - 1) <= NormTolerance
+            return Math.Abs(norm - 1) <= NormTolerance || (norm == 0 && double.IsNegativeInfinity(record.LogZTorusPerSite))
                 ? state
                 : throw new SnapshotException(FormattableString.Invariant($"The snapshot's tensors have a transfer matrix of norm {norm} where 1 belongs."));
         }
@@ -111,9 +117,7 @@ public sealed class Flow<T> : IFlow
         int step = _records.Count;
         double vertices = Math.Pow(2, step), sites = vertices * _network.SitesPerTensor;
         Tensor<T> matrix = _scheme.TransferMatrix(result.State);
-        double norm = TensorAlgebra<T>.Norm(matrix);
-        if (!(norm > 0) || !double.IsFinite(norm))
-            throw new ArithmeticException($"Step {step}: the transfer matrix has norm {norm}. All weights cancel or vanish, or the numbers left the range of doubles.");
+        double norm = Scale(step, result.State, matrix);
         NetworkState<T> state = _scheme.Rescale(result.State, 1 / norm);
         matrix = TensorAlgebra<T>.Scale(matrix, Scalar.FromReal<T>(1 / norm));
         CompensatedSum logScale = _logScale;
@@ -143,6 +147,17 @@ public sealed class Flow<T> : IFlow
         (_state, _logScale) = (state, logScale);
         _records.Add(record);
         return record;
+    }
+
+    /// <summary>The norm of the transfer matrix; 1 where that is zero and the tensors are not: any scale serves there.</summary>
+    private static double Scale(int step, NetworkState<T> state, Tensor<T> matrix)
+    {
+        double norm = TensorAlgebra<T>.Norm(matrix);
+        if (norm > 0 && double.IsFinite(norm))
+            return norm;
+        if (norm == 0 && step <= LongestZero && state.Tensors.Values.All(static t => TensorAlgebra<T>.LargestMagnitude(t) > 0))
+            return 1;
+        throw new ArithmeticException($"Step {step}: the transfer matrix has norm {norm}. All weights cancel or vanish, or the numbers left the range of doubles.");
     }
 
     /// <summary>(ln Z' - ln Z) / (N' - N) from the last torus of the same shape: both carry the same universal factor.</summary>

@@ -2,6 +2,7 @@ using System.Collections.Immutable;
 using System.Numerics;
 using TensorRG.CoarseGraining;
 using TensorRG.Models;
+using TensorRG.Models.Lattices;
 using TensorRG.Tensors;
 
 namespace TensorRG.Physics;
@@ -17,24 +18,42 @@ public static class NetworkTensors
         where T : unmanaged, INumberBase<T>
     {
         ArgumentNullException.ThrowIfNull(network);
+        if (typeof(T) == typeof(double) && !network.IsReal)
+            throw new InvalidOperationException("The elements of this network are complex: build complex tensors.");
+        return new InitialNetwork<T>(Fill<T>(network, network.Element), network.SitesPerVertex, network.LogPrefactor);
+    }
+
+    /// <summary>
+    /// An impurity on the legs of the vertex tensor, in the same order of states: each configuration's weight times o^power.
+    /// Elements that break the conservation of charge are left out; they vanish in a symmetric state.
+    /// </summary>
+    /// <typeparam name="T">Element type, that of the vertex tensor.</typeparam>
+    /// <param name="network">The network that the impurity belongs to.</param>
+    /// <param name="impurity">The impurity.</param>
+    /// <param name="power">Power of the observable, 1 to 4.</param>
+    public static Tensor<T> Insertion<T>(VertexNetwork network, Impurity impurity, int power)
+        where T : unmanaged, INumberBase<T>
+    {
+        ArgumentNullException.ThrowIfNull(network);
+        ArgumentNullException.ThrowIfNull(impurity);
+        return Fill<T>(network, (u, l, d, r) => impurity.Element(power, u, l, d, r));
+    }
+
+    private static Tensor<T> Fill<T>(VertexNetwork network, Func<int, int, int, int, Complex> element)
+        where T : unmanaged, INumberBase<T>
+    {
         var group = new AbelianGroup([.. network.GroupOrders]);
         (Leg up, int[] vertical) = Bond(group, network.VerticalBond);
         (Leg left, int[] horizontal) = Bond(group, network.HorizontalBond);
-        Tensor<T> site = Tensor<T>.FromFunction(
+        return Tensor<T>.FromFunction(
             [up, left, up.Dual, left.Dual],
             position =>
             {
                 ReadOnlySpan<int> p = position.Span;
-                return Element<T>(network, vertical[p[0]], horizontal[p[1]], vertical[p[2]], horizontal[p[3]]);
+                Complex value = element(vertical[p[0]], horizontal[p[1]], vertical[p[2]], horizontal[p[3]]);
+                return typeof(T) == typeof(double) ? Scalar.FromReal<T>(value.Real) : (T)(object)value;
             });
-        return new InitialNetwork<T>(site, network.SitesPerVertex, network.LogPrefactor);
     }
-
-    private static T Element<T>(VertexNetwork network, int u, int l, int d, int r)
-        where T : unmanaged, INumberBase<T>
-        => typeof(T) == typeof(double)
-            ? Scalar.FromReal<T>(network.RealElement(u, l, d, r))
-            : (T)(object)network.Element(u, l, d, r);
 
     private static (Leg Leg, int[] Order) Bond(AbelianGroup group, ImmutableArray<BondState> states)
     {

@@ -110,6 +110,27 @@ public sealed class FlowTests
         SchemeCase.SameSnapshots(flow.Save(), restored.Save());
     }
 
+    /// <summary>Neighbours must differ: a ring of one vertex allows nothing, so the first transfer matrix is exactly zero, and larger tori are coloured in many ways.</summary>
+    [Theory]
+    [MemberData(nameof(SchemeCase.Schemes), MemberType = typeof(SchemeCase))]
+    public void A_first_transfer_matrix_of_zero_does_not_stop_the_flow(string scheme)
+    {
+        Flow<double> flow = SchemeCase.Flow(scheme, Colourings(), SchemeCase.Uncut);
+        Assert.Equal(double.NegativeInfinity, flow.Records[0].LogZTorusPerSite);
+        Flow<double> restored = SchemeCase.Flow(scheme, Colourings(), SchemeCase.Uncut);
+        restored.Restore(flow.Save());
+        flow.Run(4);
+        restored.Run(4);
+        SchemeCase.SameSnapshots(flow.Save(), restored.Save());
+        foreach (StepRecord record in flow.Records.Where(static r => r.Step is 2 or 4))
+        {
+            var torus = Torus.After(record.Step, record.AspectRatio);
+            double z = torus.Z(Colourings()).Value.Real;
+            Assert.True(z > 0);
+            SchemeCase.Near(z, SchemeCase.TorusZ(record), z, 1e-12, $"colourings of {torus}");
+        }
+    }
+
     /// <summary>A transfer matrix whose eigenvalues all vanish: no torus has a configuration.</summary>
     [Theory]
     [MemberData(nameof(SchemeCase.Schemes), MemberType = typeof(SchemeCase))]
@@ -136,5 +157,14 @@ public sealed class FlowTests
     {
         Leg two = Leg.Plain(2, Arrow.In);
         return Tensor<double>.FromFunction([two, two, two.Dual, two.Dual], static p => p.Span[0] + p.Span[1] + p.Span[2] + p.Span[3] == 1 ? 1 : 0);
+    }
+
+    /// <summary>Three colours on the vertices; the legs u and l bring the neighbours' colours, which must differ from the vertex's own.</summary>
+    private static Tensor<double> Colourings()
+    {
+        Leg three = Leg.Plain(3, Arrow.In);
+        return Tensor<double>.FromFunction(
+            [three, three, three.Dual, three.Dual],
+            static p => p.Span[2] == p.Span[3] && p.Span[0] != p.Span[2] && p.Span[1] != p.Span[2] ? 1 : 0);
     }
 }

@@ -34,9 +34,11 @@ public static class GeneralEigen
             .ThenByDescending(static x => x.Item2.Imaginary)];
     }
 
-    private static MathNet.Numerics.LinearAlgebra.Vector<Complex> OfBlock<T>(MatrixView<T> block)
+    private static IEnumerable<Complex> OfBlock<T>(MatrixView<T> block)
         where T : unmanaged, INumberBase<T>
     {
+        if (IsZero(block))
+            return new Complex[block.Rows]; // The iteration of a zero matrix does not end.
         try
         {
             if (typeof(T) == typeof(double))
@@ -52,5 +54,20 @@ public static class GeneralEigen
         {
             throw new DecompositionException($"Eigenvalues of a {block.Rows} x {block.Columns} matrix did not converge.", e);
         }
+    }
+
+    private static bool IsZero<T>(MatrixView<T> block)
+        where T : unmanaged, INumberBase<T>
+    {
+        for (int i = 0; i < block.Rows; i++)
+        {
+            for (int j = 0; j < block.Columns; j++)
+            {
+                if (!T.IsZero(block[i, j]))
+                    return false;
+            }
+        }
+
+        return true;
     }
 }
