@@ -30,6 +30,12 @@ public sealed record RunInputs
         init => _parameters = value.WithComparers(StringComparer.Ordinal);
     }
 
+    /// <summary>Text of the model's file; null for a model of the catalogue. The run can be resumed when the file has gone.</summary>
+    public string? Definition { get; init; }
+
+    /// <summary>Form of the network where it was chosen by hand; null where the tool chose.</summary>
+    public string? NetworkForm { get; init; }
+
     /// <summary>Name of the coarse-graining scheme.</summary>
     public required string Scheme { get; init; }
 

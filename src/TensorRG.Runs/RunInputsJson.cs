@@ -6,7 +6,17 @@ namespace TensorRG.Runs;
 /// <summary>Inputs to JSON and back, and what differs between two of them.</summary>
 internal static class RunInputsJson
 {
-    public static JsonObject Write(RunInputs inputs) => new()
+    public static JsonObject Write(RunInputs inputs)
+    {
+        JsonObject json = WriteAlways(inputs);
+        if (inputs.Definition is not null)
+            json["definition"] = inputs.Definition;
+        if (inputs.NetworkForm is not null)
+            json["networkForm"] = inputs.NetworkForm;
+        return json;
+    }
+
+    private static JsonObject WriteAlways(RunInputs inputs) => new()
     {
         ["model"] = inputs.Model,
         ["parameters"] = Write(inputs.Parameters),
@@ -27,6 +37,8 @@ internal static class RunInputsJson
     public static RunInputs Read(JsonObject json) => new()
     {
         Model = json["model"]!.GetValue<string>(),
+        Definition = json["definition"]?.GetValue<string>(),
+        NetworkForm = json["networkForm"]?.GetValue<string>(),
         Parameters = ReadValues(json["parameters"]!.AsObject()),
         Scheme = json["scheme"]!.GetValue<string>(),
         SchemeOptions = ReadValues(json["schemeOptions"]!.AsObject()),
