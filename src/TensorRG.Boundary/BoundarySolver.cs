@@ -1,0 +1,90 @@
+using System.Numerics;
+using TensorRG.Tensors;
+
+namespace TensorRG.Boundary;
+
+/// <summary>
+/// Fixed points of the row-to-row transfer matrix of a uniform square network, and what follows from them: the partition function per
+/// vertex and everything that one vertex can tell. The upper and the lower fixed point are found as uniform matrix product states by
+/// the variational iteration of V. Zauner-Stauber, L. Vanderstraeten, M. T. Fishman, F. Verstraete, J. Haegeman, Phys. Rev. B 97, 045145 (2018),
+/// in its form for transfer matrices: M. T. Fishman, L. Vanderstraeten, V. Zauner-Stauber, J. Haegeman, F. Verstraete,
+/// Phys. Rev. B 98, 235148 (2018). Neither reflection symmetry nor a Hermitian transfer matrix is assumed.
+/// </summary>
+/// <typeparam name="T">Element type.</typeparam>
+/// <param name="algebra">Contractions and kernels.</param>
+/// <param name="settings">The user's choices.</param>
+public sealed class BoundarySolver<T>(TensorAlgebra<T> algebra, BoundarySettings settings)
+    where T : unmanaged, INumberBase<T>
+{
+    private readonly FixedPointSearch<T> _search = new(algebra, settings);
+
+    /// <summary>The surroundings of a row at one bond dimension.</summary>
+    /// <param name="site">A[u, l, d, r]: u, l ingoing, d, r outgoing, d matching u and r matching l; without flux.</param>
+    /// <param name="bondDimension">Most states on the bond of a fixed point, at least 1.</param>
+    /// <param name="start">A result for the same legs at another coupling or bond dimension to go on from, or null.</param>
+    /// <param name="stop">Ends the search.</param>
+    /// <exception cref="ArgumentException">The legs of the tensor do not make a uniform network, or those of the start do not fit it.</exception>
+    /// <exception cref="OperationCanceledException">The search was stopped.</exception>
+    /// <exception cref="Tensors.Kernels.DecompositionException">NaN or infinity in the tensor, or a network without weight in the sector of the state.</exception>
+    public BoundaryState<T> Solve(Tensor<T> site, int bondDimension, BoundaryState<T>? start = null, CancellationToken stop = default)
+    {
+        ArgumentOutOfRangeException.ThrowIfLessThan(bondDimension, 1);
+        Check(site, start);
+        double scale = TensorAlgebra<T>.LargestMagnitude(site);
+        using Tensor<T> row = TensorAlgebra<T>.Scale(site, Scalar.FromReal<T>(1 / scale)), turned = UpsideDown.Of(row);
+        FixedPoint<T> upper = _search.Run(row, bondDimension, start?.Upper, stop);
+        FixedPoint<T> lower = UpsideDown.Same(row, turned)
+            ? upper with { Iterations = 0 }
+            : _search.Run(turned, bondDimension, start?.Lower.Turned(), stop);
+        return Assemble(row, scale, upper, lower);
+    }
+
+    private BoundaryState<T> Assemble(Tensor<T> row, double scale, FixedPoint<T> upper, FixedPoint<T> lower)
+    {
+        UniformState<T> under = lower.State.Turned();
+        var strip = new Strip<T>(algebra, upper.State, under, settings.Seed);
+        (Tensor<T> left, Tensor<T> right, Complex factor) = strip.WithRow(row);
+        return new BoundaryState<T>
+        {
+            Upper = upper.State,
+            Lower = under,
+            FL = left,
+            FR = right,
+            LogEigenvalue = Complex.Log(factor / strip.WithoutRow()) + Math.Log(scale),
+            Residual = Math.Max(upper.Residual, lower.Residual),
+            IsConverged = upper.IsConverged && lower.IsConverged,
+            Iterations = upper.Iterations + lower.Iterations,
+            Schmidt = upper.State.SchmidtValues(algebra),
+        };
+    }
+
+    /// <summary>
+    /// The expectation value that a vertex measures: the network with one tensor replaced, over the network as it is.
+    /// </summary>
+    /// <param name="state">The surroundings of a row of <paramref name="site"/>.</param>
+    /// <param name="site">The tensor of the network.</param>
+    /// <param name="impurity">The tensor to put in its place, with the same legs and without flux.</param>
+    /// <exception cref="ArgumentException">The legs differ.</exception>
+    public Complex Expectation(BoundaryState<T> state, Tensor<T> site, Tensor<T> impurity)
+    {
+        ArgumentNullException.ThrowIfNull(state);
+        ArgumentNullException.ThrowIfNull(site);
+        ArgumentNullException.ThrowIfNull(impurity);
+        if (!impurity.Legs.SequenceEqual(site.Legs) || impurity.Flux != Charge.Zero)
+            throw new ArgumentException($"The impurity {impurity} does not have the legs of the site {site}.", nameof(impurity));
+        var strip = new Strip<T>(algebra, state.Upper, state.Lower, settings.Seed);
+        return strip.Vertex(state.FL, impurity, state.FR) / strip.Vertex(state.FL, site, state.FR);
+    }
+
+    private static void Check(Tensor<T> site, BoundaryState<T>? start)
+    {
+        ArgumentNullException.ThrowIfNull(site);
+        bool uniform = site.Rank == 4 && site.Flux == Charge.Zero
+            && site.Legs[0].Arrow == Arrow.In && site.Legs[1].Arrow == Arrow.In
+            && site.Legs[0].Matches(site.Legs[2]) && site.Legs[1].Matches(site.Legs[3]);
+        if (!uniform)
+            throw new ArgumentException($"A uniform network has one tensor [u in; l in; d out; r out] without flux, d matching u and r matching l, not {site}.", nameof(site));
+        if (start is not null && !start.Upper.AC.Legs[1].Equals(site.Legs[2]))
+            throw new ArgumentException($"The start was found for vertical legs {start.Upper.AC.Legs[1]}, the network has {site.Legs[2]}.", nameof(start));
+    }
+}

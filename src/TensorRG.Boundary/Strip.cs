@@ -1,0 +1,61 @@
+using System.Numerics;
+using TensorRG.Tensors;
+
+namespace TensorRG.Boundary;
+
+/// <summary>The infinite strip of an upper state, a row or none, and a lower state: its environments and its factor per vertex.</summary>
+/// <typeparam name="T">Element type.</typeparam>
+/// <param name="algebra">Contractions and kernels.</param>
+/// <param name="upper">State above.</param>
+/// <param name="lower">State below, contracted as it is.</param>
+/// <param name="seed">Seed of the first environments.</param>
+internal sealed class Strip<T>(TensorAlgebra<T> algebra, UniformState<T> upper, UniformState<T> lower, long seed)
+    where T : unmanaged, INumberBase<T>
+{
+    private const double Tolerance = 2e-15;
+
+    private readonly Channel<T> _channel = new(algebra);
+    private readonly Arnoldi<T> _solver = new(dimension: 24, restarts: 200);
+
+    /// <summary>FL and FR of the strip with a row, scaled to FL C C FR = 1, and its factor per vertex.</summary>
+    public (Tensor<T> Left, Tensor<T> Right, Complex Factor) WithRow(Tensor<T> row)
+    {
+        Leg a = upper.Bond.Dual, x = lower.Bond.Dual;
+        Tensor<T> left = Dominant([x, a, row.Legs[1].Dual], 3, v => _channel.Left(v, upper.AL, row, lower.AL));
+        Tensor<T> right = Dominant([row.Legs[3].Dual, a.Dual, x.Dual], 4, v => _channel.Right(v, upper.AR, row, lower.AR));
+        using Tensor<T> bond = _channel.Bond(left, upper.C, right);
+        VectorSpace.Scale(right, T.One / Close(bond, lower.C));
+        return (left, right, Vertex(left, row, right));
+    }
+
+    /// <summary>The factor per vertex of the two states on one another.</summary>
+    public Complex WithoutRow()
+    {
+        Leg a = upper.Bond.Dual, x = lower.Bond.Dual;
+        using Tensor<T> left = Dominant([x, a], 5, v => _channel.Left(v, upper.AL, lower.AL));
+        using Tensor<T> right = Dominant([a.Dual, x.Dual], 6, v => _channel.Right(v, upper.AR, lower.AR));
+        using Tensor<T> bond = algebra.Contract(left, [1], upper.C, [0]), center = algebra.Contract(left, [1], upper.AC, [0]);
+        using Tensor<T> bondUnder = algebra.Contract(bond, [1], right, [0]), centerUnder = algebra.Contract(center, [2], right, [0]);
+        return Scalar.ToComplex(Close(centerUnder, lower.AC)) / Scalar.ToComplex(Close(bondUnder, lower.C));
+    }
+
+    /// <summary>FL AC A AC FR: the strip around one vertex, which may be another than the row's.</summary>
+    public Complex Vertex(Tensor<T> left, Tensor<T> vertex, Tensor<T> right)
+    {
+        using Tensor<T> center = _channel.Center(left, upper.AC, vertex, right);
+        return Scalar.ToComplex(Close(center, lower.AC));
+    }
+
+    private Tensor<T> Dominant(Leg[] legs, int purpose, Func<Tensor<T>, Tensor<T>> apply)
+    {
+        using Tensor<T> start = VectorSpace.Random<T>(legs, new RandomSequence(seed, purpose));
+        return _solver.Dominant(apply, start, Tolerance).Vector;
+    }
+
+    private T Close(Tensor<T> a, Tensor<T> b)
+    {
+        int[] axes = [.. Enumerable.Range(0, a.Rank)];
+        using Tensor<T> number = algebra.Contract(a, axes, b, axes);
+        return number.Elements[0];
+    }
+}
