@@ -68,7 +68,7 @@ internal sealed class BoundaryBranch<T> : IDisposable
     private BranchPoint Read(BoundaryState<T> state, int chi, IReadOnlyCollection<int> variances, CancellationToken stop)
     {
         double sites = _network.SitesPerTensor;
-        var logZ = new Complex((state.LogMagnitude + _network.LogPrefactor) / sites, state.Phase / sites);
+        Complex logZ = (state.LogEigenvalue + _network.LogPrefactor) / sites;
         Complex[] means = [.. _first.Select(b => _solver.Expectation(state, _network.Site, b) / sites)];
         (double, double)[] responses = [.. _first.Select((_, i) => variances.Contains(i) ? Variance(state, i, chi, stop) : (double.NaN, double.NaN))];
         return new BranchPoint(chi, logZ, means, responses, state.Residual, state.IsConverged);

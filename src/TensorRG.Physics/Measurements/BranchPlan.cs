@@ -1,4 +1,5 @@
 using System.Collections.Immutable;
+using TensorRG.Models;
 using TensorRG.Models.Lattices;
 
 namespace TensorRG.Physics.Measurements;
