@@ -1,0 +1,44 @@
+using System.Numerics;
+
+namespace TensorRG.Models.Lattices.Bonds;
+
+/// <summary>The elements of a four-leg tensor, divided by a scale.</summary>
+internal sealed class Elements
+{
+    // What step of basis leaves of forbidden elements is round-off; more than this would be a wrong symmetry.
+    private const double RoundOff = 1e-9;
+
+    private readonly Complex[] values;
+    private readonly int vertical;
+    private readonly int horizontal;
+
+    /// <summary>Takes over the values A[u, l, d, r], row-major.</summary>
+    public Elements(Complex[] values, int vertical, int horizontal, double scale)
+    {
+        for (int i = 0; i < values.Length; i++)
+            values[i] /= scale;
+        this.values = values;
+        this.vertical = vertical;
+        this.horizontal = horizontal;
+    }
+
+    /// <summary>One element.</summary>
+    public Complex At(int u, int l, int d, int r) => values[(((((u * horizontal) + l) * vertical) + d) * horizontal) + r];
+
+    /// <summary>The real part of one element.</summary>
+    public double RealAt(int u, int l, int d, int r) => At(u, l, d, r).Real;
+
+    /// <summary>Makes elements that break a charge, and imaginary parts of a real tensor, exactly zero.</summary>
+    /// <exception cref="InvalidOperationException">They were not small: the symmetry is wrong.</exception>
+    public void Conserve(VertexNetwork network, bool isReal)
+    {
+        for (int i = 0; i < values.Length; i++)
+        {
+            (int u, int l, int d, int r) = (i / (horizontal * vertical * horizontal), i / (vertical * horizontal) % horizontal, i / horizontal % vertical, i % horizontal);
+            Complex kept = !network.ConservesCharge(u, l, d, r) ? 0 : isReal ? values[i].Real : values[i];
+            if (Complex.Abs(kept - values[i]) > RoundOff)
+                throw new InvalidOperationException($"Element ({u}, {l}, {d}, {r}) is {values[i]} where the symmetry wants {kept}.");
+            values[i] = kept;
+        }
+    }
+}

@@ -1,0 +1,66 @@
+using System.Collections.Immutable;
+using System.Globalization;
+using System.Numerics;
+using TensorRG.Models.Lattices.Bonds;
+using TensorRG.Models.Lattices.Forms;
+
+namespace TensorRG.Models.Lattices;
+
+/// <summary>
+/// Writes a lattice model as a square network of one four-leg tensor, exactly: any term a form can hold, excluded configurations, complex
+/// weights, fields, observables. The largest commutative symmetry that is found gives the legs their charges.
+/// </summary>
+public static class NetworkBuilder
+{
+    /// <summary>Builds the network.</summary>
+    /// <param name="system">The model with all numbers filled in.</param>
+    /// <param name="options">The form, the observables and the fields.</param>
+    /// <exception cref="ModelException">
+    /// The form cannot hold the terms, the tensor would be too large (more than 2^27 elements), all weights vanish, or a table or a name is wrong.
+    /// </exception>
+    public static ModelNetwork Build(LatticeSystem system, NetworkOptions options)
+    {
+        ArgumentNullException.ThrowIfNull(system);
+        ArgumentNullException.ThrowIfNull(options);
+        var terms = new VertexTerms(system, options);
+        (VertexForm form, string why) = FormChoice.Choose(system, options.Form, terms.Used);
+        var raw = new RawVertex(form, terms);
+        GradedVertex graded = Grading.Find(raw, form, terms);
+        var cells = new Cells(raw, terms, graded.Vertical, graded.Horizontal);
+        VertexNetwork network = Network(cells, graded, form, terms, raw, out double scale);
+        ImmutableArray<Impurity> impurities = [.. terms.Observables.Select(o => Impurity(cells, o, network, scale))];
+        return options.Graded
+            ? new ModelNetwork(network, impurities, form.Form, why, graded.Symmetry)
+            : new ModelNetwork(network.Ungraded(), impurities, form.Form, why, "none");
+    }
+
+    private static VertexNetwork Network(Cells cells, GradedVertex graded, VertexForm form, VertexTerms terms, RawVertex raw, out double scale)
+    {
+        ImmutableArray<BondState> vertical = States(cells.Vertical(graded.Orders)), horizontal = States(cells.Horizontal(graded.Orders));
+        Complex[] elements = cells.Weights();
+        double largest = elements.Max(static x => Complex.Abs(x));
+        if (largest == 0)
+            throw new ModelException("All elements of the vertex vanish: no configuration of a row of vertices is allowed; allow at least one.");
+        scale = largest;
+        int members = terms.NeedsBlock ? 4 : 1;
+        double logPrefactor = (members * raw.LogScale) + Math.Log(largest);
+        var values = new Elements(elements, vertical.Length, horizontal.Length, largest);
+        VertexNetwork network = terms.IsReal
+            ? VertexNetwork.Real(graded.Orders, vertical, horizontal, values.RealAt, form.Sites * members, logPrefactor)
+            : VertexNetwork.OfComplex(graded.Orders, vertical, horizontal, values.At, form.Sites * members, logPrefactor);
+        values.Conserve(network, terms.IsReal);
+        return network;
+    }
+
+    private static Impurity Impurity(Cells cells, LocalObservable observable, VertexNetwork network, double scale)
+    {
+        int v = network.VerticalBond.Length, h = network.HorizontalBond.Length;
+        Lazy<Elements>[] powers = [.. Enumerable.Range(1, 4).Select(n => new Lazy<Elements>(() => new Elements(cells.Weighted(observable, n), v, h, scale)))];
+        return new Impurity(observable.Name, (n, u, l, d, r) => n is >= 1 and <= 4
+            ? powers[n - 1].Value.At(u, l, d, r)
+            : throw new ArgumentOutOfRangeException(nameof(n), n, "The power of an observable in one vertex is 1 to 4."));
+    }
+
+    private static ImmutableArray<BondState> States(int[][] charges)
+        => [.. charges.Select(static (c, i) => new BondState(i.ToString(CultureInfo.InvariantCulture), [.. c]))];
+}

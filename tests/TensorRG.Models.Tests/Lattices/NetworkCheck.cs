@@ -1,0 +1,37 @@
+using System.Numerics;
+using TensorRG.Models.Lattices;
+
+namespace TensorRG.Models.Tests.Lattices;
+
+/// <summary>Compares the network of a system with the sum over all configurations.</summary>
+internal static class NetworkCheck
+{
+    public const double Tolerance = 1e-12;
+
+    /// <summary>Builds and compares ln Z, the phase, and the first two moments of the observables on a torus of lx x ly vertices.</summary>
+    public static ModelNetwork Torus(LatticeSystem system, NetworkOptions options, int lx, int ly)
+    {
+        ModelNetwork built = NetworkBuilder.Build(system, options);
+        Compare(built, system, options, lx, ly);
+        return built;
+    }
+
+    public static void Compare(ModelNetwork built, LatticeSystem system, NetworkOptions options, int lx, int ly)
+    {
+        int block = built.Network.SitesPerVertex == 4 * system.SitesPerCell ? 2 : 1;
+        var oracle = new TorusOracle(system, options, block * lx, block * ly);
+        var torus = new ComplexTorus(built.Network, lx, ly);
+        double factor = Math.Exp((lx * ly * built.Network.LogPrefactor) - oracle.LogScale);
+        Near(oracle.Z, factor * torus.Contract((_, _) => torus.Vertex), oracle.Scale, "Z");
+        for (int i = 0; i < options.Observables.Length; i++)
+        {
+            Impurity impurity = built.Impurities[i];
+            Complex[] first = torus.Dense((u, l, d, r) => impurity.Element(1, u, l, d, r)), second = torus.Dense((u, l, d, r) => impurity.Element(2, u, l, d, r));
+            Near(oracle.Moments[i].First, factor * torus.One(first), oracle.MomentScales[i].First, impurity.Name);
+            Near(oracle.Moments[i].Second, factor * (torus.One(second) + torus.Two(first)), oracle.MomentScales[i].Second, impurity.Name + "^2");
+        }
+    }
+
+    private static void Near(Complex expected, Complex actual, double scale, string what)
+        => Assert.True(Complex.Abs(expected - actual) <= Tolerance * scale, $"{what}: {expected} expected, {actual} found, scale {scale:R}, off by {Complex.Abs(expected - actual) / scale:E2}.");
+}
