@@ -1,4 +1,5 @@
 using System.Collections.Immutable;
+using System.Globalization;
 using TensorRG.Models.Lattices;
 
 namespace TensorRG.Models;
@@ -36,6 +37,9 @@ public abstract class Model
 
     /// <summary>What is known exactly, and where.</summary>
     public abstract IReadOnlyList<ExactReference> ExactReferences { get; }
+
+    /// <summary>The text that defines the model, where it comes from a file; null for a built-in one.</summary>
+    public virtual string? Definition => null;
 
     /// <summary>True if the model has a temperature; a model given by weights has none.</summary>
     public bool HasTemperature => Parameters.Any(p => p.Name == ParameterDefinition.TemperatureName);
@@ -96,7 +100,23 @@ public abstract class Model
     /// <summary>An exact value, or null where none is known.</summary>
     /// <param name="quantity">Which quantity.</param>
     /// <param name="parameters">A set of this model.</param>
-    public ExactValue? Exact(Quantity quantity, ParameterSet parameters) => FindExact(quantity, Own(parameters));
+    public ExactValue? Exact(Quantity quantity, ParameterSet parameters) => Exact(QuantityNames.Name(quantity), parameters);
+
+    /// <summary>An exact value by name, or null where none is known.</summary>
+    /// <param name="quantity">One of <see cref="QuantityNames"/>, or the name of an observable.</param>
+    /// <param name="parameters">A set of this model.</param>
+    public ExactValue? Exact(string quantity, ParameterSet parameters) => FindExact(quantity, Own(parameters));
+
+    /// <summary>What a setting sets: pairs of a parameter's name and its value.</summary>
+    /// <param name="name">Name or symbol of a parameter or a shorthand, in any case.</param>
+    /// <param name="text">The value as written; a number in the invariant culture.</param>
+    /// <exception cref="ModelException">The text is no number.</exception>
+    public virtual IEnumerable<KeyValuePair<string, double>> Settings(string name, string text)
+    {
+        if (!double.TryParse(text, NumberStyles.Float, CultureInfo.InvariantCulture, out double value))
+            throw new ModelException($"Parameter '{name}' is set to '{text}', which is no number. Give a number, such as 0.5 or 1e-3.");
+        return [KeyValuePair.Create(name, value)];
+    }
 
     /// <summary>Position of a parameter in <see cref="Parameters"/>.</summary>
     /// <param name="name">Name or symbol, in any case.</param>
@@ -124,10 +144,16 @@ public abstract class Model
     /// <param name="parameters">A set of this model.</param>
     protected virtual LatticeSystem? DescribeSystem(ParameterSet parameters) => null;
 
-    /// <summary>See <see cref="Exact"/>; the set is known to be this model's.</summary>
+    /// <summary>See <see cref="Exact(Quantity, ParameterSet)"/>; the set is known to be this model's.</summary>
     /// <param name="quantity">Which quantity.</param>
     /// <param name="parameters">A set of this model.</param>
-    protected abstract ExactValue? FindExact(Quantity quantity, ParameterSet parameters);
+    protected virtual ExactValue? FindExact(Quantity quantity, ParameterSet parameters) => null;
+
+    /// <summary>See <see cref="Exact(string, ParameterSet)"/>; the set is known to be this model's.</summary>
+    /// <param name="quantity">One of <see cref="QuantityNames"/>, or the name of an observable.</param>
+    /// <param name="parameters">A set of this model.</param>
+    protected virtual ExactValue? FindExact(string quantity, ParameterSet parameters)
+        => QuantityNames.Find(quantity) is { } known ? FindExact(known, parameters) : null;
 
     private ParameterSet AtCriticalIfAllowed(ParameterSet set, ParameterDefinition temperature)
         => FindCriticalTemperature(set).Temperature is { } critical && temperature.Allows(critical.Value)

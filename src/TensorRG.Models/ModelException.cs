@@ -1,7 +1,7 @@
 namespace TensorRG.Models;
 
 /// <summary>A model or its parameters were asked for something they do not have. The message names what, and the remedy.</summary>
-public sealed class ModelException : ArgumentException
+public class ModelException : ArgumentException
 {
     /// <summary>An exception with a standard message.</summary>
     public ModelException()
