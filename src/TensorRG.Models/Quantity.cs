@@ -17,4 +17,10 @@ public enum Quantity
 
     /// <summary>Jump of the energy per site at the transition; 0 for a continuous one.</summary>
     LatentHeat,
+
+    /// <summary>Entropy S / N.</summary>
+    EntropyPerSite,
+
+    /// <summary>Mean number of particles per site.</summary>
+    Density,
 }

@@ -172,7 +172,7 @@ public class ExactTests
             foreach (Quantity quantity in Enum.GetValues<Quantity>())
             {
                 ExactValue[] values = [.. sets.Select(p => model.Exact(quantity, p)).OfType<ExactValue>()];
-                bool declared = model.ExactReferences.Any(r => r.Quantity == quantity);
+                bool declared = model.ExactReferences.Any(r => r.Quantity == QuantityNames.Name(quantity));
                 Assert.True(declared == (values.Length > 0), $"{model.Name}: {quantity} is {(declared ? "declared but never given" : "given but not declared")}");
                 Assert.All(values, v => Assert.True(double.IsFinite(v.Value) && v.Uncertainty >= 0 && v.Source.Length > 0 && v.Note.Length > 0));
             }

@@ -80,7 +80,7 @@ internal static class ModelsCommand
             new Reports.TableColumn("validity", ColumnKind.Text) { Title = "where" },
             new Reports.TableColumn("source", ColumnKind.Text));
         foreach (ExactReference reference in model.ExactReferences)
-            table.AddRow(QuantityName(reference.Quantity), reference.Validity, reference.Source);
+            table.AddRow(QuantityNames.Words(reference.Quantity), reference.Validity, reference.Source);
         return table;
     }
 
@@ -93,14 +93,4 @@ internal static class ModelsCommand
         ("symmetry", model.Symmetry),
         ("parameters", ParameterTable(model).ToJson()),
         ("exactReferences", ReferenceTable(model).ToJson()));
-
-    private static string QuantityName(Quantity quantity) => quantity switch
-    {
-        Quantity.LogZPerSite => "ln Z per site",
-        Quantity.EnergyPerSite => "energy per site",
-        Quantity.SpecificHeatPerSite => "specific heat per site",
-        Quantity.SpontaneousMagnetisation => "spontaneous magnetisation",
-        Quantity.LatentHeat => "latent heat per site",
-        _ => quantity.ToString(),
-    };
 }
