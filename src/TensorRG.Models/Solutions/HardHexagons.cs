@@ -14,7 +14,8 @@ internal static class HardHexagons
 
     // Within this distance of ln z_c nothing changes in double precision but the density, by 1e-10.
     private const double Touching = 4e-15;
-    private const double Smallest = 0.15;
+    // ln z differs from ln z_c by about exp(-2/e), e = -ln|x|: less than a double tells.
+    private const double Smallest = 0.04;
 
     /// <summary>ln kappa and the mean density at an activity z &gt; 0.</summary>
     public static (double LogKappa, double Density) At(double z)
@@ -30,7 +31,7 @@ internal static class HardHexagons
     private static (double LogKappa, double Density) Dilute(double x)
     {
         double logKappa = (3 * LogH(x)) + (2 * LogQ(Pow(x, 5))) - (2 * LogG(x))
-            + Sum(x, n => [(6 * n) - 4, (6 * n) - 3, (6 * n) - 3, (6 * n) - 2], n => [(6 * n) - 5, (6 * n) - 1, 6 * n, 6 * n]);
+            + Sum(x, 6, [2, 3, 3, 4], [1, 5, 6, 6]);
         double odd = LogQ(Pow(x, 3)) - LogQ(Pow(x, 6)) - LogQ(x) + LogQ(x * x);
         return (logKappa, -x * Math.Exp(LogG(x) + LogH(Pow(x, 6)) + odd));
     }
@@ -38,7 +39,7 @@ internal static class HardHexagons
     private static (double LogKappa, double Density) Dense(double x)
     {
         double logKappa = (-Math.Log(x) / 3) + (3 * LogG(x)) + (2 * LogQ(Pow(x, 5))) - (2 * LogH(x))
-            + Sum(x, n => [(3 * n) - 2, (3 * n) - 1], n => [3 * n, 3 * n]);
+            + Sum(x, 3, [1, 2], [3, 3]);
         double norm = LogH(x) + LogQ(x) - (2 * LogQ(Pow(x, 3)));
         double far = x * x * Math.Exp(norm + LogH(Pow(x, 9)) + LogQ(Pow(x, 9)));
         double difference = Math.Exp(norm + LogG(x) + LogQ(x));
@@ -61,18 +62,23 @@ internal static class HardHexagons
         return low + ((high - low) / 2);
     }
 
-    private static double LogG(double x) => -Sum(x, n => [(5 * n) - 4, (5 * n) - 1], _ => []);
+    private static double LogG(double x) => -Sum(x, 5, [1, 4], []);
 
-    private static double LogH(double x) => -Sum(x, n => [(5 * n) - 3, (5 * n) - 2], _ => []);
+    private static double LogH(double x) => -Sum(x, 5, [2, 3], []);
 
-    private static double LogQ(double x) => Sum(x, n => [n], _ => []);
+    private static double LogQ(double x) => Sum(x, 1, [1], []);
 
-    // Sum over n >= 1 of ln(1 - x^k): k in above less k in below.
-    private static double Sum(double x, Func<int, int[]> above, Func<int, int[]> below)
+    // Sum of ln(1 - x^k) over k = period n + residue, n >= 0: residues above less residues below.
+    private static double Sum(double x, int period, ReadOnlySpan<int> above, ReadOnlySpan<int> below)
     {
         double sum = 0;
-        for (int n = 1; n == 1 || Math.Abs(Pow(x, n - 1)) > 1e-18; n++)
-            sum += above(n).Sum(k => Elementary.Log1P(-Pow(x, k))) - below(n).Sum(k => Elementary.Log1P(-Pow(x, k)));
+        for (int k = 0; k == 0 || Math.Abs(Pow(x, k)) > 1e-18; k += period)
+        {
+            foreach (int residue in above)
+                sum += Elementary.Log1P(-Pow(x, k + residue));
+            foreach (int residue in below)
+                sum -= Elementary.Log1P(-Pow(x, k + residue));
+        }
         return sum;
     }
 

@@ -12,15 +12,21 @@ internal static class Strip
     public static double LogLargest(IReadOnlyList<int> rows, Func<int, int, double> weight)
     {
         double[][] matrix = [.. rows.Select(next => rows.Select(row => weight(row, next)).ToArray())];
-        double[] vector = [.. rows.Select(_ => 1.0)];
+        return LogLargest(rows.Count, v => [.. matrix.Select(line => Dot(line, v))]);
+    }
+
+    /// <summary>ln of the largest eigenvalue of a map. Pairs of steps, since +- the largest may both be eigenvalues.</summary>
+    public static double LogLargest(int count, Func<double[], double[]> map)
+    {
+        double[] vector = [.. Enumerable.Repeat(1.0, count)];
         double value = 0;
         for (int i = 0; i < 3000; i++)
         {
-            double[] image = [.. matrix.Select(line => Dot(line, vector))];
-            double norm = Math.Sqrt(Dot(image, image)), before = value;
+            double[] image = map(map(vector));
+            double norm = Math.Sqrt(Dot(image, image) / Dot(vector, vector)), before = value;
             (vector, value) = ([.. image.Select(x => x / norm)], norm);
-            if (Math.Abs(value - before) < 1e-14 * value)
-                return Math.Log(value);
+            if (Math.Abs(value - before) < 1e-13 * value)
+                return Math.Log(value) / 2;
         }
         throw new InvalidOperationException("The power iteration did not converge.");
     }
@@ -38,7 +44,7 @@ internal static class Strip
     /// <param name="width">Columns.</param>
     /// <param name="weight">Weight from up, left, down, right.</param>
     public static double Vertex(int width, Func<int, int, int, int, double> weight)
-        => LogLargest(Rows(width), (row, next) => Ring(width, (x, l, r) => weight(Bit(row, x, width), l, Bit(next, x, width), r)));
+        => LogLargest(1 << width, v => RowOfVertices(width, weight, v));
 
     /// <summary>Trace of the product along a row of 2 x 2 matrices.</summary>
     public static double Ring(int width, Func<int, int, int, double> element)
@@ -59,6 +65,37 @@ internal static class Strip
     {
         Matrix<double> system = Matrix<double>.Build.Dense(widths.Count, widths.Count, (i, j) => Math.Pow(widths[i], -2 * j));
         return system.Solve(Vector<double>.Build.Dense([.. widths.Select(perSite)]))[0];
+    }
+
+    // One vertex after the other; the state carries the left leg of the next vertex beside the row, and the first left leg is fixed.
+    private static double[] RowOfVertices(int width, Func<int, int, int, int, double> weight, double[] vector)
+    {
+        var result = new double[vector.Length];
+        for (int first = 0; first < 2; first++)
+        {
+            double[][] now = first == 0 ? [vector, new double[vector.Length]] : [new double[vector.Length], vector];
+            for (int x = 0; x < width; x++)
+                now = Step(x, weight, now);
+            for (int i = 0; i < result.Length; i++)
+                result[i] += now[first][i];
+        }
+        return result;
+    }
+
+    private static double[][] Step(int x, Func<int, int, int, int, double> weight, double[][] now)
+    {
+        double[][] next = [new double[now[0].Length], new double[now[0].Length]];
+        for (int legs = 0; legs < 16; legs++)
+        {
+            (int u, int l, int d, int r) = (legs & 1, (legs >> 1) & 1, (legs >> 2) & 1, (legs >> 3) & 1);
+            double w = weight(u, l, d, r);
+            for (int row = 0; w != 0 && row < now[l].Length; row++)
+            {
+                if (((row >> x) & 1) == u)
+                    next[r][row ^ ((u ^ d) << x)] += w * now[l][row];
+            }
+        }
+        return next;
     }
 
     private static double Dot(double[] a, double[] b)
