@@ -8,6 +8,8 @@ namespace TensorRG.Models;
 /// </summary>
 public sealed class IsingModel : Model
 {
+    private readonly KnownIsingSquare solution = new();
+
     /// <inheritdoc/>
     public override string Name => "ising";
 
@@ -42,39 +44,15 @@ public sealed class IsingModel : Model
         [new("J", ["Jx", "Jy"], "Sets Jx and Jy to the same value")];
 
     /// <inheritdoc/>
-    public override IReadOnlyList<ExactReference> ExactReferences { get; } =
-    [
-        new(Quantity.LogZPerSite, "h = 0, any T, Jx, Jy", IsingSolution.OnsagerSource),
-        new(Quantity.EnergyPerSite, "h = 0, any T, Jx, Jy", IsingSolution.OnsagerSource),
-        new(Quantity.SpecificHeatPerSite, "h = 0, any T, Jx, Jy", IsingSolution.OnsagerSource),
-        new(Quantity.SpontaneousMagnetisation, "h = 0, any T, Jx, Jy", IsingSolution.MagnetisationSource),
-    ];
+    public override IReadOnlyList<ExactReference> ExactReferences => solution.References;
 
     /// <inheritdoc/>
-    protected override CriticalPoint FindCriticalTemperature(ParameterSet parameters)
-    {
-        if (parameters["h"] != 0)
-            return CriticalPoint.None("a magnetic field removes the transition of the ferromagnet, and that of the antiferromagnet in a field is not known exactly");
-        if (parameters["Jx"] == 0 || parameters["Jy"] == 0)
-            return CriticalPoint.None("with Jx = 0 or Jy = 0 the lattice falls apart into chains, which do not order at any temperature above zero");
-        return CriticalPoint.At(IsingSolution.CriticalTemperature(parameters["Jx"], parameters["Jy"]));
-    }
+    protected override CriticalPoint FindCriticalTemperature(ParameterSet parameters) => solution.CriticalTemperature(parameters);
 
     /// <inheritdoc/>
-    protected override VertexNetwork BuildNetwork(ParameterSet parameters)
-    {
-        double t = parameters.Temperature;
-        double kx = parameters["Jx"] / t, ky = parameters["Jy"] / t, field = parameters["h"] / t;
-        double logPrefactor = Constants.Ln2 + Elementary.LogCosh(kx) + Elementary.LogCosh(ky) + Elementary.LogCosh(field);
-        double[] vertical = [1, Math.Tanh(ky)], horizontal = [1, Math.Tanh(kx)];
-        return field == 0
-            ? CyclicNetwork.Graded(vertical, horizontal, logPrefactor)
-            : CyclicNetwork.WithField(vertical, horizontal, [1, Math.Tanh(field)], logPrefactor);
-    }
+    protected override VertexNetwork BuildNetwork(ParameterSet parameters) => solution.Network(parameters)!;
 
     /// <inheritdoc/>
     protected override ExactValue? FindExact(Quantity quantity, ParameterSet parameters)
-        => parameters["h"] == 0
-            ? IsingSolution.At(parameters.Temperature, parameters["Jx"], parameters["Jy"]).Exact(quantity)
-            : null;
+        => solution.Exact(QuantityNames.Name(quantity), parameters);
 }

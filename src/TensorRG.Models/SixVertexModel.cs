@@ -1,4 +1,3 @@
-using System.Collections.Immutable;
 using TensorRG.Models.Solutions;
 
 namespace TensorRG.Models;
@@ -13,6 +12,8 @@ namespace TensorRG.Models;
 /// </summary>
 public sealed class SixVertexModel : Model
 {
+    private readonly KnownSixVertex solution = new();
+
     /// <inheritdoc/>
     public override string Name => "six-vertex";
 
@@ -45,37 +46,17 @@ public sealed class SixVertexModel : Model
     ];
 
     /// <inheritdoc/>
-    public override IReadOnlyList<ExactReference> ExactReferences { get; } =
-        [new(Quantity.LogZPerSite, "any a, b, c (per vertex)", SixVertexSolution.Source)];
+    public override IReadOnlyList<ExactReference> ExactReferences => solution.References;
 
     /// <inheritdoc/>
-    protected override CriticalPoint FindCriticalTemperature(ParameterSet parameters)
-        => CriticalPoint.None("the model is given by weights and has no temperature");
+    protected override CriticalPoint FindCriticalTemperature(ParameterSet parameters) => solution.CriticalTemperature(parameters);
 
     /// <inheritdoc/>
-    protected override VertexNetwork BuildNetwork(ParameterSet parameters)
-    {
-        double a = parameters["a"], b = parameters["b"], c = parameters["c"];
-        double largest = Math.Max(a, Math.Max(b, c));
-        (a, b, c) = (a / largest, b / largest, c / largest);
-        ImmutableArray<BondState> bond = [new("no line", [0]), new("line", [1])];
-        return VertexNetwork.Real([0], bond, bond, Element, SitesPerVertex, Math.Log(largest));
-
-        double Element(int u, int l, int d, int r)
-        {
-            if (u + l != d + r)
-                return 0;
-            if (u == l)
-                return a;
-            return u == d ? b : c;
-        }
-    }
+    protected override VertexNetwork BuildNetwork(ParameterSet parameters) => solution.Network(parameters)!;
 
     /// <inheritdoc/>
     protected override ExactValue? FindExact(Quantity quantity, ParameterSet parameters)
-        => quantity == Quantity.LogZPerSite
-            ? SixVertexSolution.LogZPerVertex(parameters["a"], parameters["b"], parameters["c"])
-            : null;
+        => solution.Exact(QuantityNames.Name(quantity), parameters);
 
     private static ParameterDefinition Weight(string name, string meaning) => new()
     {

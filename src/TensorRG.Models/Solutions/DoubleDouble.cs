@@ -56,18 +56,8 @@ internal readonly struct DoubleDouble
         return (e - (1.0 / e)) * 0.5;
     }
 
-    private static DoubleDouble SinhSeries(DoubleDouble x)
-    {
-        DoubleDouble square = x * x, term = x, sum = x;
-        for (int n = 2; n < 30; n += 2)
-        {
-            term = term * square / (n * (n + 1.0));
-            sum += term;
-        }
-        return sum;
-    }
-
-    private static DoubleDouble Exp(DoubleDouble x)
+    /// <summary>exp x for |x| &lt; 700, relative error about 1e-30.</summary>
+    public static DoubleDouble Exp(DoubleDouble x)
     {
         double k = Math.Round(x.High / Ln2.High);
         DoubleDouble r = x - (Ln2 * k), term = 1, sum = 1;
@@ -78,6 +68,17 @@ internal readonly struct DoubleDouble
         }
         double scale = Math.ScaleB(1, (int)k);
         return new DoubleDouble(sum.High * scale, sum.Low * scale);
+    }
+
+    private static DoubleDouble SinhSeries(DoubleDouble x)
+    {
+        DoubleDouble square = x * x, term = x, sum = x;
+        for (int n = 2; n < 30; n += 2)
+        {
+            term = term * square / (n * (n + 1.0));
+            sum += term;
+        }
+        return sum;
     }
 
     private static DoubleDouble TwoSum(double a, double b)

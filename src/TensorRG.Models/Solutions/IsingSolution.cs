@@ -26,6 +26,7 @@ public sealed class IsingSolution
         Jet integral = Momenta.Mean(couplings.LogMode);
         LogZPerSite = couplings.Sum + (integral.Value / 2);
         EnergyPerSite = -temperature * (couplings.Sum + (integral.First / 2));
+        EntropyPerSite = (integral.Value - integral.First) / 2;
         SpecificHeatPerSite = couplings.ScaledDistance == 0 ? double.PositiveInfinity : Math.Max(0, integral.Second / 2);
     }
 
@@ -34,6 +35,9 @@ public sealed class IsingSolution
 
     /// <summary>U / N, in the unit of the couplings.</summary>
     public double EnergyPerSite { get; }
+
+    /// <summary>S / N = ln Z / N + U / (N T); the ground-state energy, which cancels, is left out of both.</summary>
+    public double EntropyPerSite { get; }
 
     /// <summary>C / N; infinite at criticality, if a double can name it.</summary>
     public double SpecificHeatPerSite { get; }
@@ -78,6 +82,7 @@ public sealed class IsingSolution
     {
         Quantity.LogZPerSite => Value(LogZPerSite, 1, "integral over one momentum, by double-exponential quadrature"),
         Quantity.EnergyPerSite => Value(EnergyPerSite, temperature * couplings.Sum, "integral of the derivative of the integrand"),
+        Quantity.EntropyPerSite => Value(EntropyPerSite, 1, "ln Z + U/T, the ground-state energy taken out of both"),
         Quantity.SpecificHeatPerSite when double.IsFinite(SpecificHeatPerSite) =>
             Value(SpecificHeatPerSite, 1, "integral of the second derivative of the integrand"),
         Quantity.SpontaneousMagnetisation => Magnetisation(),
