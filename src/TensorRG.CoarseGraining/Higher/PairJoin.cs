@@ -14,12 +14,23 @@ namespace TensorRG.CoarseGraining.Higher;
 internal sealed class PairJoin<T>(TensorAlgebra<T> algebra, CutRule cut)
     where T : unmanaged, INumberBase<T>
 {
+    /// <summary>Share of a derivative in the density below which it is round-off: that of an observable that is constant.</summary>
+    private const double LeastShare = 1e-26;
+
     /// <summary>U[l1, l2, x] from the side that loses less; for equal losses the left.</summary>
-    public TruncatedEigen<T> Isometry(Tensor<T> a)
+    public TruncatedEigen<T> Isometry(Tensor<T> a) => Isometry(a, [], 0);
+
+    /// <summary>
+    /// U[l1, l2, x] from the density M M^H of the stacked pair, with those of the derivatives M' added: the pair with B in place of A in either of the two,
+    /// summed. Of each the trace is <paramref name="weight"/> times that of the first.
+    /// </summary>
+    /// <param name="a">A.</param>
+    /// <param name="derivatives">The tensors B; they may change the charge.</param>
+    /// <param name="weight">Their weight, not negative.</param>
+    public TruncatedEigen<T> Isometry(Tensor<T> a, IReadOnlyList<Tensor<T>> derivatives, double weight)
     {
-        using Tensor<T> conjugate = a.Conjugate();
-        TruncatedEigen<T> left = Leading(a, conjugate, side: 1, other: 3);
-        TruncatedEigen<T> right = Leading(a, conjugate, side: 3, other: 1);
+        TruncatedEigen<T> left = Leading(a, derivatives, weight, side: 1);
+        TruncatedEigen<T> right = Leading(a, derivatives, weight, side: 3);
         if (left.Truncation.DiscardedFraction <= right.Truncation.DiscardedFraction)
             return left;
         using Tensor<T> dual = right.Vectors.Conjugate();
@@ -47,14 +58,52 @@ internal sealed class PairJoin<T>(TensorAlgebra<T> algebra, CutRule cut)
         return Close(top, bottom);
     }
 
-    /// <summary>Leading eigenvectors of M M^H on the pair of legs of one side, M being the two stacked tensors.</summary>
-    private TruncatedEigen<T> Leading(Tensor<T> a, Tensor<T> conjugate, int side, int other)
+    private TruncatedEigen<T> Leading(Tensor<T> a, IReadOnlyList<Tensor<T>> derivatives, double weight, int side)
     {
-        using Tensor<T> top = algebra.Contract(a, [0, other], conjugate, [0, other]);
-        using Tensor<T> bottom = algebra.Contract(a, [2, other], conjugate, [2, other]);
+        Tensor<T> density = Density(a, a, a, a, side);
+        double trace = Trace(density);
+        foreach (Tensor<T> b in derivatives)
+        {
+            using Tensor<T> added = Derivative(a, b, side);
+            double share = Trace(added);
+            if (share > LeastShare * trace)
+                Add(ref density, added, weight * trace / share);
+        }
+
+        using Tensor<T> owned = density;
+        return GradedEigen.Compute(algebra.Kernels, owned, cut);
+    }
+
+    /// <summary>M' M'^H, M' being B over A plus A over B.</summary>
+    private Tensor<T> Derivative(Tensor<T> a, Tensor<T> b, int side)
+    {
+        Tensor<T> sum = Density(b, b, a, a, side);
+        foreach ((Tensor<T> x, Tensor<T> y) in ((Tensor<T>, Tensor<T>)[])[(b, a), (a, b), (a, a)])
+        {
+            using Tensor<T> term = Density(x, y, x == b ? a : b, y == b ? a : b, side);
+            Add(ref sum, term, 1);
+        }
+
+        return sum;
+    }
+
+    /// <summary>M M^H on the pair of legs of one side: M is the upper tensor over the lower one, and M^H is made of tensors of its own.</summary>
+    private Tensor<T> Density(Tensor<T> upper, Tensor<T> upperAdjoint, Tensor<T> lower, Tensor<T> lowerAdjoint, int side)
+    {
+        int other = 4 - side;
         bool left = side == 1;
+        using Tensor<T> upperConjugate = upperAdjoint.Conjugate(), lowerConjugate = lowerAdjoint.Conjugate();
+        using Tensor<T> top = algebra.Contract(upper, [0, other], upperConjugate, [0, other]);
+        using Tensor<T> bottom = algebra.Contract(lower, [2, other], lowerConjugate, [2, other]);
         using Tensor<T> gram = algebra.Contract(top, left ? [1, 3] : [0, 2], bottom, [0, 2]);
-        using Tensor<T> ordered = gram.Permute(0, 2, 1, 3);
-        return GradedEigen.Compute(algebra.Kernels, ordered, cut);
+        return gram.Permute(0, 2, 1, 3);
+    }
+
+    private static double Trace(Tensor<T> density) => Scalar.RealPart(TensorAlgebra<T>.Trace(density, [0, 1], [2, 3]).Elements[0]);
+
+    private static void Add(ref Tensor<T> sum, Tensor<T> term, double factor)
+    {
+        using Tensor<T> before = sum;
+        sum = TensorAlgebra<T>.Add(before, term, Scalar.FromReal<T>(factor));
     }
 }

@@ -14,6 +14,9 @@ namespace TensorRG.CoarseGraining.Moments;
 internal sealed class BlockPowers<T>(ImmutableArray<Tensor<T>> powers) : IDisposable
     where T : unmanaged, INumberBase<T>
 {
+    /// <summary>T^(1) / N.</summary>
+    public Tensor<T> First => powers[0];
+
     private int Order => powers.Length;
 
     /// <summary>Clones of the tensors of one vertex, divided by powers of its sites.</summary>

@@ -17,6 +17,9 @@ public sealed class MomentFlow<T>
 {
     private const int HighestOrder = 4;
 
+    /// <summary>Weight of the first moments in the density that the isometries come from, as measured (DEVELOPERS.md).</summary>
+    private const double DerivativeWeight = 0.3;
+
     /// <summary>|Tr T^(0)| relative to the norm of the transfer matrix below which weights cancel, and a mean says nothing of a block.</summary>
     private const double LeastTrace = 0.1;
 
@@ -77,7 +80,7 @@ public sealed class MomentFlow<T>
         bool vertical = (Step + 1) % 2 == 1;
         using MomentState<T>? turned = vertical ? null : _state.Turn();
         MomentState<T> oriented = turned ?? _state;
-        TruncatedEigen<T> isometry = _pair.Isometry(oriented.Site);
+        TruncatedEigen<T> isometry = _pair.Isometry(oriented.Site, [.. oriented.Observables.Select(static o => o.First)], DerivativeWeight);
         using Tensor<T> vectors = isometry.Vectors;
         MomentState<T> joined = oriented.Join(_pair, vectors);
         if (!vertical)
