@@ -17,6 +17,8 @@ internal sealed class HigherOrderScheme<T>(TensorAlgebra<T> algebra, SchemeSetti
 {
     private const string Site = "site";
 
+    private readonly PairJoin<T> _pair = new(algebra, settings.Cut);
+
     /// <inheritdoc/>
     public int ShapePeriod => 2;
 
@@ -28,8 +30,8 @@ internal sealed class HigherOrderScheme<T>(TensorAlgebra<T> algebra, SchemeSetti
     {
         bool vertical = step % 2 == 1;
         using Tensor<T> oriented = vertical ? state[Site].Clone() : state[Site].Permute(1, 0, 3, 2);
-        TruncatedEigen<T> isometry = Isometry(oriented);
-        using Tensor<T> joined = Join(oriented, isometry.Vectors);
+        TruncatedEigen<T> isometry = _pair.Isometry(oriented);
+        using Tensor<T> joined = _pair.Join(oriented, isometry.Vectors);
         Tensor<T> site = vertical ? joined.Clone() : joined.Permute(1, 0, 3, 2);
         return new CoarseStep<T>(NetworkState<T>.Of(Site, site), isometry.Truncation.DiscardedFraction, [.. isometry.Truncation.Notices]);
     }
@@ -45,36 +47,4 @@ internal sealed class HigherOrderScheme<T>(TensorAlgebra<T> algebra, SchemeSetti
 
     /// <inheritdoc/>
     public double AspectRatio(int step) => step % 2 == 1 ? 2 : 1;
-
-    /// <summary>U[l1, l2, x] from the side that loses less; for equal losses the left.</summary>
-    private TruncatedEigen<T> Isometry(Tensor<T> a)
-    {
-        using Tensor<T> conjugate = a.Conjugate();
-        TruncatedEigen<T> left = Leading(a, conjugate, side: 1, other: 3);
-        TruncatedEigen<T> right = Leading(a, conjugate, side: 3, other: 1);
-        if (left.Truncation.DiscardedFraction <= right.Truncation.DiscardedFraction)
-            return left;
-        using Tensor<T> dual = right.Vectors.Conjugate();
-        return right with { Vectors = dual.ReverseArrow(2) };
-    }
-
-    /// <summary>Leading eigenvectors of M M^H on the pair of legs of one side, M being the two stacked tensors.</summary>
-    private TruncatedEigen<T> Leading(Tensor<T> a, Tensor<T> conjugate, int side, int other)
-    {
-        using Tensor<T> top = algebra.Contract(a, [0, other], conjugate, [0, other]);
-        using Tensor<T> bottom = algebra.Contract(a, [2, other], conjugate, [2, other]);
-        bool left = side == 1;
-        using Tensor<T> gram = algebra.Contract(top, left ? [1, 3] : [0, 2], bottom, [0, 2]);
-        using Tensor<T> ordered = gram.Permute(0, 2, 1, 3);
-        return GradedEigen.Compute(algebra.Kernels, ordered, settings.Cut);
-    }
-
-    /// <summary>A'[u, x, d, x'] = conj(U)[l1, l2, x] A[u, l1, m, r1] A[m, l2, d, r2] U[r1, r2, x'].</summary>
-    private Tensor<T> Join(Tensor<T> a, Tensor<T> isometry)
-    {
-        using Tensor<T> conjugate = isometry.Conjugate();
-        using Tensor<T> top = algebra.Contract(a, [1], conjugate, [0]);
-        using Tensor<T> bottom = algebra.Contract(a, [3], isometry, [1]);
-        return algebra.Contract(top, [1, 2, 3], bottom, [0, 3, 1]);
-    }
 }
