@@ -21,6 +21,7 @@ internal static class PanelPainter
         plot.FigureBackground.Color = Colors.White; // a transparent one turns black in the SVG
         plot.DataBackground.Color = Colors.White;
         StyleAxes(plot, data, font);
+        if (data.Panel.Map is { } map) plot.Add.Plottable(new CellPainter(map, new ColorScale(data.ColorRange)));
         foreach (var guide in data.VisibleGuides) AddGuide(plot, data, guide);
         foreach (var series in data.Series.Where(s => s.IsGuide)) AddSeries(plot, data, series);
         foreach (var series in data.Series.Where(s => !s.IsGuide)) AddSeries(plot, data, series);
