@@ -27,7 +27,7 @@ internal static class GridText
         CheckConflicts(model, axes);
         double points = axes.Aggregate(1.0, static (product, axis) => product * axis.Values.Length);
         if (points > MostPoints)
-            throw new UsageException(FormattableString.Invariant($"The grid has {points:0.##E+0} points; at most {MostPoints} are allowed. Use fewer values on an axis, or several sweeps."));
+            throw new UsageException(FormattableString.Invariant($"The grid has {points:0} points; at most {MostPoints} are allowed. Use fewer values on an axis, or several sweeps."));
         return axes;
     }
 
