@@ -34,6 +34,8 @@ internal static class Application
         root.Subcommands.Add(ResumeCommand.Create());
         root.Subcommands.Add(ConvergeCommand.Create());
         root.Subcommands.Add(ModelsCommand.Create());
+        root.Subcommands.Add(MeasureCommand.Create());
+        root.Subcommands.Add(SweepCommand.Create());
         return root;
     }
 

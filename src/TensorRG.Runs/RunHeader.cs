@@ -45,7 +45,8 @@ internal sealed record RunHeader(RunInputs Inputs, ImmutableSortedDictionary<str
     public static bool IsNotWhatWasWritten(Exception cause) => cause is JsonException or FormatException
         or InvalidOperationException or ArgumentException or NullReferenceException or OverflowException;
 
-    private static void CheckSchema(string file, int schema)
+    /// <summary>Refuses a file of a newer schema.</summary>
+    public static void CheckSchema(string file, int schema)
     {
         if (schema > RunSchema.Current)
         {
@@ -55,10 +56,12 @@ internal sealed record RunHeader(RunInputs Inputs, ImmutableSortedDictionary<str
         }
     }
 
-    private static ImmutableSortedDictionary<string, string> ReadLabels(JsonObject json) =>
+    /// <summary>Labels from JSON.</summary>
+    public static ImmutableSortedDictionary<string, string> ReadLabels(JsonObject json) =>
         json.ToImmutableSortedDictionary(l => l.Key, l => l.Value!.GetValue<string>(), StringComparer.Ordinal);
 
-    private static RunStoreException Changed(string file, string why) => new(
+    /// <summary>The refusal of a changed header.</summary>
+    public static RunStoreException Changed(string file, string why) => new(
         RunStoreProblem.Damaged,
         $"'{file}' was changed by hand or damaged: {why}. Restore the file, or start a new run with the inputs you want.");
 }

@@ -1,4 +1,6 @@
 using System.Collections.Immutable;
+using System.Security.Cryptography;
+using System.Text;
 using System.Text.Json.Nodes;
 
 namespace TensorRG.Runs;
@@ -6,6 +8,8 @@ namespace TensorRG.Runs;
 /// <summary>Inputs to JSON and back, and what differs between two of them.</summary>
 internal static class RunInputsJson
 {
+    private const int LongestShown = 120;
+
     public static JsonObject Write(RunInputs inputs)
     {
         JsonObject json = WriteAlways(inputs);
@@ -53,32 +57,36 @@ internal static class RunInputsJson
     };
 
     /// <summary>One line for each input that differs: <c>bondDimension is 16 in the folder, 32 asked for</c>.</summary>
-    public static IReadOnlyList<string> Differences(RunInputs stored, RunInputs asked)
+    public static IReadOnlyList<string> Differences(RunInputs stored, RunInputs asked) => Differences(Write(stored), Write(asked));
+
+    /// <summary>The same for any two trees of inputs.</summary>
+    public static IReadOnlyList<string> Differences(JsonObject stored, JsonObject asked)
     {
-        SortedDictionary<string, string> left = Flatten(stored);
-        SortedDictionary<string, string> right = Flatten(asked);
+        var left = new SortedDictionary<string, string>(StringComparer.Ordinal);
+        var right = new SortedDictionary<string, string>(StringComparer.Ordinal);
+        Flatten(stored, "", left);
+        Flatten(asked, "", right);
         return [.. left.Keys.Union(right.Keys).Order(StringComparer.Ordinal)
             .Where(name => left.GetValueOrDefault(name) != right.GetValueOrDefault(name))
-            .Select(name => $"{name} is {left.GetValueOrDefault(name, "absent")} in the folder, "
-                + $"{right.GetValueOrDefault(name, "absent")} asked for")];
+            .Select(name => $"{name} is {Short(left.GetValueOrDefault(name, "absent"))} in the folder, "
+                + $"{Short(right.GetValueOrDefault(name, "absent"))} asked for")];
     }
 
-    private static SortedDictionary<string, string> Flatten(RunInputs inputs)
+    private static void Flatten(JsonObject json, string prefix, SortedDictionary<string, string> flat)
     {
-        SortedDictionary<string, string> flat = new(StringComparer.Ordinal);
-        foreach ((string name, JsonNode? node) in Write(inputs))
+        foreach ((string name, JsonNode? node) in json)
         {
-            if (node is not JsonObject values)
-                flat[name] = Text(node);
+            if (node is JsonObject inner)
+                Flatten(inner, $"{prefix}{name}.", flat);
             else
-                foreach ((string inner, JsonNode? value) in values)
-                    flat[$"{name}.{inner}"] = Text(value);
+                flat[prefix + name] = Encoding.UTF8.GetString(CanonicalJson.Compact(node));
         }
-
-        return flat;
     }
 
-    private static string Text(JsonNode? node) => System.Text.Encoding.UTF8.GetString(CanonicalJson.Compact(node));
+    /// <summary>A long list or text by its beginning and its checksum.</summary>
+    private static string Short(string text) => text.Length <= LongestShown
+        ? text
+        : $"{text[..(LongestShown / 2)]}... (SHA-256 {Convert.ToHexStringLower(SHA256.HashData(Encoding.UTF8.GetBytes(text)))[..10]}...)";
 
     private static JsonObject Write(ImmutableSortedDictionary<string, InputValue> values) =>
         new(values.Select(v => KeyValuePair.Create(v.Key, (JsonNode?)v.Value.ToJson())));

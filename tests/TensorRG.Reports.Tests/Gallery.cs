@@ -29,6 +29,13 @@ public static class Gallery
         ["empty"] = LinePlot.Create("empty", "Nothing", "", new PlotAxis("x"), new PlotAxis("y", AxisScale.Logarithmic), []),
         ["extreme"] = Line("extreme", new PlotAxis("x"), new PlotAxis("y"), Series("e", (-1e300, 1e-300), (1e300, 1e308))),
         ["long words"] = Line("long", new PlotAxis(new string('x', 300)), new PlotAxis(new string('y', 200)), [.. Enumerable.Range(1, 9).Select(i => Series($"a rather long series name, number {i}", (i, i), (i + 1, 2 * i)))]),
+        ["sweep lines"] = SweepPlot.Lines(new PlotAxis("temperature T [energy / k_B]"), Temperatures(24), [Energy(24), SpecificHeat(24)], "Sweep of two quantities", Caption, new Guide("exact critical temperature", 2.269185, IsVertical: true)),
+        ["sweep of many points"] = SweepPlot.Lines(new PlotAxis("temperature T [energy / k_B]"), Temperatures(300), [Energy(300), SpecificHeat(300), Energy(300), SpecificHeat(300), Energy(300)], "Sweep of five quantities", Caption),
+        ["sweep of one point"] = SweepPlot.Lines(new PlotAxis("q") { IsWhole = true }, [3], [new SweepQuantity("ln-z", [1], [0], [true], [double.NaN])], "One point", Caption),
+        ["map"] = SweepPlot.Maps(new PlotAxis("temperature T [energy / k_B]"), [2, 1, 1.5, 2.5], new PlotAxis("h [energy]"), [0, -0.5, 0.5], [Plane("magnetisation", 4, 3, i => i - 5), Plane("ln-z", 4, 3, i => 1e-7 * i * i)], "Map of two quantities", Caption),
+        ["map awkward"] = SweepPlot.Maps(new PlotAxis("q") { IsWhole = true }, [2, 3, 4, 9], new PlotAxis("J [energy]"), [-1], [Plane("constant", 4, 1, i => i == 2 ? double.NaN : 0.1)], "Constant values with a hole", Caption),
+        ["map empty"] = SweepPlot.Maps(new PlotAxis("x"), [1, 2], new PlotAxis("y"), [1, 2], [Plane("nothing", 2, 2, _ => double.NaN)], "No value at all", Caption),
+        ["map fine"] = SweepPlot.Maps(new PlotAxis("temperature T [energy / k_B]"), Temperatures(120), new PlotAxis("h [energy]"), [.. Enumerable.Range(0, 80).Select(i => i / 80.0)], [Plane("energy [energy]", 120, 80, i => -Math.Cos(i / 80 / 40.0) * Math.Exp(-(i % 80) / 50.0))], "A fine map", Caption),
     };
 
     /// <summary>A figure drawn under the culture of the test run, once for all tests.</summary>
@@ -56,6 +63,29 @@ public static class Gallery
         var exact = new DataSeries("exact", [.. Enumerable.Range(0, 200).Select(i => new DataPoint(1.5 + i * 0.0075, Curve(1.5 + i * 0.0075)))]) { Style = SeriesStyle.Guide };
         return LinePlot.Create("sweep", "Energy per site of the square Ising model", Caption, new PlotAxis("temperature T (units of J)"), new PlotAxis("energy per site u (units of J)"), [data, exact], new Guide("critical temperature", 2.269185, IsVertical: true));
     }
+
+    private static ImmutableArray<double> Temperatures(int count) => [.. Enumerable.Range(0, count).Select(i => 1.5 + 1.5 * i / count)];
+
+    private static SweepQuantity Energy(int count) => new(
+        "energy [energy]",
+        [.. Temperatures(count).Select((t, i) => i == 5 ? double.NaN : Curve(t) + 0.02 * Math.Sin(40 * t))],
+        [.. Temperatures(count).Select((t, i) => i % 3 == 0 ? 1e-9 : 0.04)],
+        [.. Temperatures(count).Select(t => Math.Abs(t - 2.27) > 0.1)],
+        [.. Temperatures(count).Select(Curve)]);
+
+    private static SweepQuantity SpecificHeat(int count) => new(
+        "specific-heat",
+        [.. Temperatures(count).Select(t => -0.5 * Math.Log(Math.Abs(t - 2.269) + 1e-3))],
+        [.. Temperatures(count).Select(t => 0.03 / (1 + 100 * Math.Abs(t - 2.269)))],
+        [.. Temperatures(count).Select(t => true)],
+        [.. Temperatures(count).Select(t => double.NaN)]);
+
+    private static SweepQuantity Plane(string label, int columns, int rows, Func<int, double> value) => new(
+        label,
+        [.. Enumerable.Range(0, columns * rows).Select(value)],
+        [.. Enumerable.Range(0, columns * rows).Select(_ => 0.0)],
+        [.. Enumerable.Range(0, columns * rows).Select(i => i % 7 != 3)],
+        [.. Enumerable.Range(0, columns * rows).Select(_ => double.NaN)]);
 
     private static double Curve(double t) => -1.45 + 0.55 * Math.Tanh(2 * (t - 2.27));
 

@@ -28,7 +28,7 @@ internal sealed class MemoryFiles : IRunFiles
     public IReadOnlyList<string> List(string folder)
     {
         Point();
-        return [.. Names];
+        return [.. _names.Keys.Where(p => Path.GetDirectoryName(p) == folder).Select(static p => Path.GetFileName(p)!)];
     }
 
     public byte[] Read(string path)

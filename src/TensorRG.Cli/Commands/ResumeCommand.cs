@@ -3,6 +3,7 @@ using TensorRG.Cli.Execution;
 using TensorRG.Cli.Input;
 using TensorRG.Cli.Output;
 using TensorRG.Runs;
+using TensorRG.Runs.Points;
 
 namespace TensorRG.Cli.Commands;
 
@@ -11,9 +12,9 @@ internal static class ResumeCommand
 {
     public static Command Create()
     {
-        var command = new Command("resume", "Go on with a run that was stopped or killed; the result has the same bits as if it had not been.");
-        Argument<string> folder = TextInput.Required("dir", "Folder of the run.");
-        Option<int> threads = new FlowOptions().Threads;
+        var command = new Command("resume", "Go on with a run or sweep that was stopped or killed; the result has the same bits as if it had not been.");
+        Argument<string> folder = TextInput.Required("dir", "Folder of the run or sweep.");
+        Option<int> threads = new MachineOptions().Threads;
         (Option<bool> json, Option<bool> quiet) = OutputOptions.Create();
         Option<bool> plot = OutputOptions.Plot();
         command.Arguments.Add(folder);
@@ -26,6 +27,8 @@ internal static class ResumeCommand
 
     private static int Resume(string path, int threads, OutputMode mode, bool plot)
     {
+        if (SweepFolder.IsSweep(path))
+            return SweepExecutor.Execute(RunLocation.Reach(() => SweepFolder.Open(path, ModelSource.Restore)), threads, mode);
         RunFolder folder = RunLocation.Open(path);
         return RunCommand.Finish(folder, BackendChoice.Create(folder.Inputs.Backend, threads), threads, mode, plot);
     }

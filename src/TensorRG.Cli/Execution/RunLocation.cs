@@ -21,7 +21,7 @@ internal static class RunLocation
     public static RunFolder Open(string path) => Reach(() => RunFolder.Open(path));
 
     /// <summary>Before anything is computed, a folder that cannot be used is bad input; a full disk is a failure at any time.</summary>
-    private static RunFolder Reach(Func<RunFolder> open)
+    public static T Reach<T>(Func<T> open)
     {
         try
         {

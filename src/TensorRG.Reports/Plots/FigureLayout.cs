@@ -31,7 +31,7 @@ internal sealed class FigureLayout
         CaptionLines = font.Wrap(figure.Caption, CaptionSize, width);
         var tickLabels = panels.SelectMany(p => p.YTicks).Select(t => font.Width(t.Label, TickSize)).DefaultIfEmpty().Max();
         var left = MathF.Ceiling(Margin + LabelSize + LabelGap + TickLength + 4 + tickLabels);
-        var right = MathF.Floor(figure.Width - Margin - panels.Max(LastLabelOverhang));
+        var right = MathF.Floor(figure.Width - Margin - panels.Max(p => Math.Max(LastLabelOverhang(p), ColorBarRoom(p))));
         var legends = panels.Select(p => Legend(p, left, right)).ToList();
         var top = Margin + TitleLines.Length * TitleSize * LineSpacing + 6;
         var bottom = figure.Height - Margin - CaptionLines.Length * CaptionSize * LineSpacing;
@@ -77,6 +77,10 @@ internal sealed class FigureLayout
         var labels = panel.XTicks.Where(t => t.Label.Length > 0).ToList();
         return labels.Count == 0 ? 0 : _font.Width(labels[^1].Label, TickSize) / 2;
     }
+
+    private float ColorBarRoom(PanelData panel) => panel.Panel.Map is null
+        ? 0
+        : ColorBarPainter.Gap + ColorBarPainter.Width + TickLength + 4 + panel.ColorTicks.Select(t => _font.Width(t.Label, TickSize)).DefaultIfEmpty().Max() + LabelGap + LabelSize;
 
     /// <summary>One series alone needs no legend: title and axis say what it is.</summary>
     private ImmutableArray<LegendEntry> Legend(PanelData panel, float left, float right)

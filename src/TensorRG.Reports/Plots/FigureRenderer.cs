@@ -48,7 +48,8 @@ public static class FigureRenderer
         for (var i = 0; i < panels.Length; i++)
         {
             PanelPainter.Paint(canvas, panels[i], layout.Areas[i], figure, font);
-            PaintLabels(canvas, panels[i], layout.Areas[i], font);
+            if (panels[i].Panel.Map is not null) ColorBarPainter.Paint(canvas, panels[i], layout.Areas[i], font);
+            PaintLabels(canvas, panels[i], layout.Areas[i], figure, font);
             PaintLegend(canvas, layout.Areas[i], font);
         }
         for (var i = 0; i < layout.TitleLines.Length; i++)
@@ -57,7 +58,7 @@ public static class FigureRenderer
             PaintText(canvas, layout.CaptionLines[i], FigureLayout.Margin, layout.CaptionBaseline(i), FigureLayout.CaptionSize, Palette.FaintText, font);
     }
 
-    private static void PaintLabels(SKCanvas canvas, PanelData panel, PanelArea area, PlotFont font)
+    private static void PaintLabels(SKCanvas canvas, PanelData panel, PanelArea area, Figure figure, PlotFont font)
     {
         var middle = (area.Data.Left + area.Data.Right) / 2;
         PaintLabel(canvas, panel.XLabel, middle, FigureLayout.XLabelBaseline(area), area.Data.Width, font);
@@ -65,6 +66,7 @@ public static class FigureRenderer
         canvas.Save();
         canvas.RotateDegrees(-90);
         PaintLabel(canvas, panel.YLabel, -(area.Data.Top + area.Data.Bottom) / 2, FigureLayout.YLabelBaseline, area.Data.Height, font);
+        PaintLabel(canvas, panel.ColorLabel, -(area.Data.Top + area.Data.Bottom) / 2, figure.Width - FigureLayout.Margin - 0.2f * FigureLayout.LabelSize, area.Data.Height, font);
         canvas.Restore();
     }
 
@@ -103,7 +105,7 @@ public static class FigureRenderer
             new MarkerStyle(series.Marker, PanelPainter.MarkerSize, series.Color).Render(canvas, new Pixel(entry.Left + FigureLayout.LegendKeyWidth / 2, centre), paint);
     }
 
-    private static void PaintText(SKCanvas canvas, string text, float left, float baseline, float size, Color color, PlotFont font)
+    internal static void PaintText(SKCanvas canvas, string text, float left, float baseline, float size, Color color, PlotFont font)
     {
         using var skFont = font.At(size);
         using var paint = new SKPaint { Color = color.ToSKColor(), IsAntialias = true };

@@ -16,9 +16,15 @@ internal sealed class PanelData
         Series = Resolve(panel);
         XRange = Range(panel.X, panel.Series.SelectMany(s => s.Points).Select(p => PlotScale.Position(p.X, panel.X.Scale)), Crossings(panel, vertical: true));
         YRange = Range(panel.Y, Series.SelectMany(s => s.Points).SelectMany(BarEnds), Crossings(panel, vertical: false));
+        if (panel.Map is { } map)
+        {
+            (XRange, YRange) = (Extent(map.X), Extent(map.Y));
+            ColorRange = ColorsOf(map);
+            (ColorTicks, ColorLabel) = TicksOf(new PlotAxis(map.Label), ColorRange, superscripts, intervals: 6);
+        }
         (XTicks, XLabel) = TicksOf(panel.X, XRange, superscripts, intervals: 8);
         (YTicks, YLabel) = TicksOf(panel.Y, YRange, superscripts, intervals: 6);
-        Notices = [.. panel.Series.Select(LeftOut).Append(Beyond()).Concat(panel.Guides.Select(LeftOut)).OfType<string>()];
+        Notices = [.. panel.Series.Select(LeftOut).Append(Beyond()).Append(Empty(panel.Map)).Concat(panel.Guides.Select(LeftOut)).OfType<string>()];
     }
 
     public PlotPanel Panel { get; }
@@ -36,6 +42,13 @@ internal sealed class PanelData
     public string XLabel { get; }
 
     public string YLabel { get; }
+
+    /// <summary>The values of a map from the first colour to the last.</summary>
+    public AxisRange ColorRange { get; }
+
+    public ImmutableArray<AxisTick> ColorTicks { get; } = [];
+
+    public string ColorLabel { get; } = "";
 
     public ImmutableArray<string> Notices { get; }
 
@@ -109,6 +122,28 @@ internal sealed class PanelData
         var included = axis.Include is { } value ? PlotScale.Position(value, axis.Scale) : double.NaN;
         var end = axis.Maximum is { } maximum ? PlotScale.Position(maximum, axis.Scale) : double.PositiveInfinity;
         return AxisRange.Around(data.Concat(guides).Append(included).Where(double.IsFinite).Select(p => Math.Min(p, end)), axis.Scale);
+    }
+
+    private static AxisRange Extent(ImmutableArray<double> values)
+    {
+        var edges = CellEdges.Of(values);
+        return new AxisRange(edges[0], edges[^1]);
+    }
+
+    /// <summary>From the smallest value to the largest, without a margin; equal values get one.</summary>
+    private static AxisRange ColorsOf(CellMap map)
+    {
+        var finite = map.Values.Where(double.IsFinite).ToList();
+        var around = AxisRange.Around(finite, AxisScale.Linear);
+        if (finite.Count == 0) return around;
+        var (low, high) = (finite.Min(), finite.Max());
+        return high - low > 1e-12 * Math.Max(Math.Abs(low), Math.Abs(high)) ? new AxisRange(low, high) : around;
+    }
+
+    private static string? Empty(CellMap? map)
+    {
+        var count = map?.Values.Count(v => !double.IsFinite(v)) ?? 0;
+        return count == 0 ? null : $"{count} of {map!.Values.Length} cells of '{map.Label}' have no value and are grey.";
     }
 
     private static (ImmutableArray<AxisTick> Ticks, string Label) TicksOf(PlotAxis axis, AxisRange range, bool superscripts, int intervals)

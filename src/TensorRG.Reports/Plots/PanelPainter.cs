@@ -21,9 +21,11 @@ internal static class PanelPainter
         plot.FigureBackground.Color = Colors.White; // a transparent one turns black in the SVG
         plot.DataBackground.Color = Colors.White;
         StyleAxes(plot, data, font);
+        if (data.Panel.Map is { } map) plot.Add.Plottable(new CellPainter(map, new ColorScale(data.ColorRange)));
         foreach (var guide in data.VisibleGuides) AddGuide(plot, data, guide);
-        foreach (var series in data.Series.Where(s => s.IsGuide)) AddSeries(plot, data, series);
-        foreach (var series in data.Series.Where(s => !s.IsGuide)) AddSeries(plot, data, series);
+        var hidden = HiddenBar(data, area);
+        foreach (var series in data.Series.Where(s => s.IsGuide)) AddSeries(plot, data, series, hidden);
+        foreach (var series in data.Series.Where(s => !s.IsGuide)) AddSeries(plot, data, series, hidden);
         plot.Axes.SetLimits(data.XRange.Low, data.XRange.High, data.YRange.Low, data.YRange.High);
         if (data.Panel.Top is not null) plot.Axes.SetLimitsX(data.XRange.Low, data.XRange.High, plot.Axes.Top);
         var rectangle = area.Data;
@@ -79,9 +81,13 @@ internal static class PanelPainter
         else plot.Add.HorizontalLine(position, GuideWidth, Palette.Guide, LinePattern.Dotted);
     }
 
-    private static void AddSeries(Plot plot, PanelData data, PlottedSeries series)
+    /// <summary>Length in axis coordinates up to which a bar lies behind its marker: its caps would only spoil the marker's shape.</summary>
+    private static double HiddenBar(PanelData data, PanelArea area) => MarkerSize * data.YRange.Length / area.Data.Height;
+
+    private static void AddSeries(Plot plot, PanelData data, PlottedSeries series, double hidden)
     {
-        foreach (var point in series.Points.Where(p => p.HasBar)) AddBar(plot, data, series, point);
+        var least = series.HasMarkers ? hidden : 0;
+        foreach (var point in series.Points.Where(p => p.HasBar && p.BarHigh - p.BarLow > least)) AddBar(plot, data, series, point);
         if (series.HasLine)
         {
             foreach (var run in series.Runs) AddLine(plot, data, series, run);

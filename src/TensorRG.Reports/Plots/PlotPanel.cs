@@ -13,4 +13,7 @@ public sealed record PlotPanel(PlotAxis X, PlotAxis Y, ImmutableArray<DataSeries
 
     /// <summary>A second scale along the top; null for none.</summary>
     public TopAxis? Top { get; init; }
+
+    /// <summary>A map behind the series, with a colour bar; its cells fill the panel. Null for none.</summary>
+    public CellMap? Map { get; init; }
 }

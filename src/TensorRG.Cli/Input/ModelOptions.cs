@@ -1,0 +1,24 @@
+using System.CommandLine;
+
+namespace TensorRG.Cli.Input;
+
+/// <summary>The argument and the options that say of which model; shared by all commands that compute.</summary>
+internal sealed class ModelOptions
+{
+    public Argument<string> Model { get; } = TextInput.Required("model", "Name of a model; 'tensorrg models' lists them.");
+
+    public Option<string> Temperature { get; } = new("--temperature", "-T")
+    {
+        Description = "Temperature (k_B = 1, in units of the coupling), or 'critical' where that is known exactly. Default: critical.",
+        HelpName = "T|critical",
+    };
+
+    public Option<string[]> Set { get; } = new("--set", "-s")
+    {
+        Description = "Value of a model parameter; repeat for more.",
+        HelpName = "NAME=VALUE",
+    };
+
+    public ParameterRequest Read(ParseResult result)
+        => ParameterRequest.Create(ModelSource.Find(result.GetRequiredValue(Model)), result.GetValue(Temperature), result.GetValue(Set) ?? []);
+}
