@@ -41,6 +41,12 @@ internal sealed class Arnoldi<T>(int dimension, int restarts)
                 Tensor<T> next = apply(basis[n - 1]);
                 double rest = Orthogonalise(next, basis, h, n - 1);
                 basis.Add(next);
+                if (!IsChecked(n))
+                {
+                    VectorSpace.Scale(next, Scalar.FromReal<T>(1 / rest));
+                    continue;
+                }
+
                 (Complex value, Complex[] y) = SmallEigen.Dominant(h, n, typeof(T) == typeof(double));
                 double residual = value == Complex.Zero ? double.PositiveInfinity : rest * y[^1].Magnitude / value.Magnitude;
                 if (residual <= tolerance || n == dimension || rest <= 1e-16 * value.Magnitude)
@@ -54,6 +60,9 @@ internal sealed class Arnoldi<T>(int dimension, int restarts)
                 vector.Dispose();
         }
     }
+
+    /// <summary>The small eigenvalue problem costs as much as an application, so it is solved at every third vector only, once there are some.</summary>
+    private bool IsChecked(int n) => n <= 3 || n % 3 == 0 || n == dimension;
 
     private static double Orthogonalise(Tensor<T> next, List<Tensor<T>> basis, Complex[,] h, int column)
     {

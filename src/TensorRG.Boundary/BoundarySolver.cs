@@ -13,10 +13,11 @@ namespace TensorRG.Boundary;
 /// <typeparam name="T">Element type.</typeparam>
 /// <param name="algebra">Contractions and kernels.</param>
 /// <param name="settings">The user's choices.</param>
-public sealed class BoundarySolver<T>(TensorAlgebra<T> algebra, BoundarySettings settings)
+/// <param name="report">Is told of every round, on the thread that called; null for nobody.</param>
+public sealed class BoundarySolver<T>(TensorAlgebra<T> algebra, BoundarySettings settings, Action<BoundaryProgress>? report = null)
     where T : unmanaged, INumberBase<T>
 {
-    private readonly FixedPointSearch<T> _search = new(algebra, settings);
+    private readonly FixedPointSearch<T> _search = new(algebra, settings, report);
 
     /// <summary>The surroundings of a row at one bond dimension.</summary>
     /// <param name="site">A[u, l, d, r]: u, l ingoing, d, r outgoing, d matching u and r matching l; without flux.</param>

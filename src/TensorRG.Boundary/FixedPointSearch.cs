@@ -8,17 +8,22 @@ namespace TensorRG.Boundary;
 /// <typeparam name="T">Element type.</typeparam>
 /// <param name="algebra">Contractions and kernels.</param>
 /// <param name="settings">The user's choices.</param>
-internal sealed class FixedPointSearch<T>(TensorAlgebra<T> algebra, BoundarySettings settings)
+/// <param name="report">Is told of every round.</param>
+internal sealed class FixedPointSearch<T>(TensorAlgebra<T> algebra, BoundarySettings settings, Action<BoundaryProgress>? report)
     where T : unmanaged, INumberBase<T>
 {
     private const double GrowthTolerance = 1e-6;
     private const int GrowthIterations = 200;
+    private const int TrialIterations = 15;
     private const int Patience = 60;
     private const double SmallestSchmidt = 1e-16;
 
     private readonly SubspaceExpansion<T> _expansion = new(algebra);
 
-    /// <summary>The dominant eigenvector as a uniform state of at most a bond dimension.</summary>
+    /// <summary>
+    /// The dominant eigenvector as a uniform state of at most a bond dimension. The last growth goes a quarter too far and is cut back to the largest Schmidt
+    /// values: the directions that two vertices propose are spread less well over the charges.
+    /// </summary>
     /// <param name="row">A[u, l, d, r].</param>
     /// <param name="bondDimension">Most states on the bond.</param>
     /// <param name="start">A state with the vertical leg of the row, or null.</param>
@@ -31,14 +36,24 @@ internal sealed class FixedPointSearch<T>(TensorAlgebra<T> algebra, BoundarySett
         while (problem.State.BondDimension < bondDimension)
         {
             iterations += Converge(problem, GrowthTolerance, GrowthIterations, stop);
-            problem.Replace(Reduced(problem.State, bondDimension));
-            problem.Iterate();
-            if (!Grow(problem, bondDimension))
+            Reduce(problem, bondDimension);
+            if (!Grow(problem, bondDimension + (bondDimension / 4) + 1))
                 break;
+            if (problem.State.BondDimension <= bondDimension)
+                continue;
+            iterations += Converge(problem, GrowthTolerance, TrialIterations, stop);
+            problem.Replace(Reduced(problem.State, bondDimension));
+            break;
         }
 
         iterations += Converge(problem, settings.Tolerance, settings.MaxIterations, stop);
         return new FixedPoint<T>(Reduced(problem.State, bondDimension), problem.Residual, iterations, problem.Residual <= settings.Tolerance);
+    }
+
+    private void Reduce(RowProblem<T> problem, int bondDimension)
+    {
+        problem.Replace(Reduced(problem.State, bondDimension));
+        problem.Iterate();
     }
 
     private bool Grow(RowProblem<T> problem, int bondDimension)
@@ -53,7 +68,7 @@ internal sealed class FixedPointSearch<T>(TensorAlgebra<T> algebra, BoundarySett
     }
 
     /// <summary>Rounds until the residual is small or no longer falls; their number.</summary>
-    private static int Converge(RowProblem<T> problem, double tolerance, int most, CancellationToken stop)
+    private int Converge(RowProblem<T> problem, double tolerance, int most, CancellationToken stop)
     {
         double best = double.PositiveInfinity;
         int since = 0;
@@ -61,6 +76,7 @@ internal sealed class FixedPointSearch<T>(TensorAlgebra<T> algebra, BoundarySett
         {
             stop.ThrowIfCancellationRequested();
             problem.Iterate();
+            report?.Invoke(new BoundaryProgress(problem.State.BondDimension, n, problem.Residual, problem.Applications));
             since = problem.Residual < 0.5 * best ? 0 : since + 1;
             best = since == 0 ? problem.Residual : best;
             if (problem.Residual <= tolerance || since > Patience)
