@@ -84,9 +84,11 @@ public abstract class Model
     /// <summary>The vertex network.</summary>
     /// <param name="parameters">A set of this model.</param>
     /// <param name="graded">False drops the charges: the same tensor in the same basis with the trivial group.</param>
-    public VertexNetwork Network(ParameterSet parameters, bool graded = true)
+    /// <param name="form">Form of the network; Auto lets the model choose.</param>
+    /// <exception cref="ModelException">The model cannot be written in that form.</exception>
+    public VertexNetwork Network(ParameterSet parameters, bool graded = true, NetworkForm form = NetworkForm.Auto)
     {
-        VertexNetwork network = BuildNetwork(Own(parameters));
+        VertexNetwork network = form == NetworkForm.Auto ? BuildNetwork(Own(parameters)) : OfForm(Own(parameters), form);
         return graded ? network : network.Ungraded();
     }
 
@@ -113,8 +115,8 @@ public abstract class Model
     /// <exception cref="ModelException">The text is no number.</exception>
     public virtual IEnumerable<KeyValuePair<string, double>> Settings(string name, string text)
     {
-        if (!double.TryParse(text, NumberStyles.Float, CultureInfo.InvariantCulture, out double value))
-            throw new ModelException($"Parameter '{name}' is set to '{text}', which is no number. Give a number, such as 0.5 or 1e-3.");
+        if (!double.TryParse(text, NumberStyles.Float, CultureInfo.InvariantCulture, out double value) || !double.IsFinite(value))
+            throw new ModelException($"Parameter '{name}' takes a finite number, such as 0.5 or 1e-3, not '{text}'. Use a point, not a comma, for decimals.");
         return [KeyValuePair.Create(name, value)];
     }
 
@@ -154,6 +156,11 @@ public abstract class Model
     /// <param name="parameters">A set of this model.</param>
     protected virtual ExactValue? FindExact(string quantity, ParameterSet parameters)
         => QuantityNames.Find(quantity) is { } known ? FindExact(known, parameters) : null;
+
+    private VertexNetwork OfForm(ParameterSet parameters, NetworkForm form)
+        => DescribeSystem(parameters) is { } system
+            ? NetworkBuilder.Build(system, new NetworkOptions { Form = form }).Network
+            : throw new ModelException($"The model '{Name}' is given by one network alone: leave the form to the tool.");
 
     private ParameterSet AtCriticalIfAllowed(ParameterSet set, ParameterDefinition temperature)
         => FindCriticalTemperature(set).Temperature is { } critical && temperature.Allows(critical.Value)

@@ -1,6 +1,7 @@
 using System.Numerics;
 using TensorRG.CoarseGraining;
 using TensorRG.Models;
+using TensorRG.Models.Lattices;
 using TensorRG.Physics;
 using TensorRG.Tensors;
 using TensorRG.Tensors.Decompositions;
@@ -30,8 +31,9 @@ public static class FlowFactory
     /// <param name="steps">Number of steps.</param>
     /// <param name="graded">Whether symmetry is used.</param>
     /// <param name="backend">Name of the backend.</param>
+    /// <param name="form">Form of the network.</param>
     public static RunInputs Describe(
-        ParameterSet parameters, SchemeDefinition scheme, SchemeSettings settings, int steps, bool graded, string backend)
+        ParameterSet parameters, SchemeDefinition scheme, SchemeSettings settings, int steps, bool graded, string backend, NetworkForm form = NetworkForm.Auto)
     {
         ArgumentNullException.ThrowIfNull(parameters);
         ArgumentNullException.ThrowIfNull(scheme);
@@ -42,6 +44,8 @@ public static class FlowFactory
         return new RunInputs
         {
             Model = parameters.Model.Name,
+            Definition = ModelCatalogue.StoredText(parameters.Model),
+            NetworkForm = form == NetworkForm.Auto ? null : FormText(form),
             Parameters = RunInputs.Empty.AddRange(parameters.Values.Select(static p => KeyValuePair.Create(p.Key, InputValue.FromDouble(p.Value)))),
             Scheme = scheme.Name,
             SchemeOptions = options,
@@ -50,7 +54,7 @@ public static class FlowFactory
             Seed = settings.Seed,
             MultipletGap = settings.Cut.MultipletGap,
             Graded = graded,
-            ElementType = parameters.Model.Network(parameters, graded).IsReal ? "double" : "complex",
+            ElementType = parameters.Model.Network(parameters, graded, form).IsReal ? "double" : "complex",
             Backend = backend,
             NumericsVersion = NumericsVersion,
         };
@@ -62,7 +66,7 @@ public static class FlowFactory
     public static ParameterSet Parameters(RunInputs inputs)
     {
         ArgumentNullException.ThrowIfNull(inputs);
-        return ModelCatalogue.Find(inputs.Model)
+        return ModelCatalogue.Restore(inputs.Model, inputs.Definition)
             .CreateParameters(inputs.Parameters.Select(static p => KeyValuePair.Create(p.Key, p.Value.ToDouble())));
     }
 
@@ -92,8 +96,13 @@ public static class FlowFactory
     {
         ParameterSet parameters = Parameters(inputs);
         IScheme<T> scheme = Scheme(inputs).Create(new TensorAlgebra<T>(backend), Settings(inputs));
-        return new Flow<T>(scheme, NetworkTensors.Build<T>(parameters.Model.Network(parameters, inputs.Graded)));
+        return new Flow<T>(scheme, NetworkTensors.Build<T>(parameters.Model.Network(parameters, inputs.Graded, Form(inputs))));
     }
+
+    private static NetworkForm Form(RunInputs inputs)
+        => inputs.NetworkForm is { } name ? Enum.Parse<NetworkForm>(name, ignoreCase: true) : NetworkForm.Auto;
+
+    private static string FormText(NetworkForm form) => Enum.GetName(form)!.ToLowerInvariant();
 
     private static SchemeSettings Settings(RunInputs inputs)
     {

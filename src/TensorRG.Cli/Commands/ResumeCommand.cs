@@ -28,7 +28,7 @@ internal static class ResumeCommand
     private static int Resume(string path, int threads, OutputMode mode, bool plot)
     {
         if (SweepFolder.IsSweep(path))
-            return SweepExecutor.Execute(RunLocation.Reach(() => SweepFolder.Open(path, ModelSource.Restore)), threads, mode);
+            return SweepExecutor.Execute(RunLocation.Reach(() => SweepFolder.Open(path, ModelCatalogue.Restore)), threads, mode);
         RunFolder folder = RunLocation.Open(path);
         return RunCommand.Finish(folder, BackendChoice.Create(folder.Inputs.Backend, threads), threads, mode, plot);
     }

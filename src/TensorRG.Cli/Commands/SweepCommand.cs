@@ -52,7 +52,7 @@ internal static class SweepCommand
         var inputs = new SweepInputs
         {
             Measurement = request.Inputs(parameters),
-            Definition = ModelSource.Definition(model.Model),
+            Definition = ModelCatalogue.StoredText(model.Model),
             Axes = axes,
             Temperature = Temperature(model, axes),
             Backend = request.Backend,

@@ -7,5 +7,5 @@ namespace TensorRG.Cli.Execution;
 internal static class Measurers
 {
     /// <summary>A measurer on a backend.</summary>
-    public static IMeasurer Create(Backend backend) => new FlowMeasurer(backend);
+    public static IMeasurer Create(Backend backend) => new MeasurementEngine(backend);
 }

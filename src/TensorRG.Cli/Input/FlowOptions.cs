@@ -26,6 +26,8 @@ internal sealed class FlowOptions
 
     public Option<string> Grading { get; } = ChoiceOption.OneOf("--grading", "Whether tensors are block-sparse by the model's symmetry: same numbers, less time.", "on", "on", "off");
 
+    public Option<string> Form { get; } = ChoiceOption.OneOf("--form", "Form of the tensor network; 'tensorrg models MODEL' says which one auto takes.", "auto", NetworkForms.Names);
+
     public Option<string> Decomposition { get; } = ChoiceOption.OneOf("--decomposition", "How singular values are found: 'iterative' keeps to rings of three-leg pieces unless the tensor is small or its spectrum too slow, 'full' decomposes the tensor completely (slow, for checks).", "auto", "auto", "iterative", "full");
 
     public Option<double?> BondExponent { get; } = NumberOption.Real("--bond-exponent", "Exponent k of the bond weights; bond-weighted scheme only. Error bars are calibrated for the default of -0.5.", -1, 0.5);
@@ -34,7 +36,7 @@ internal sealed class FlowOptions
 
     public void AddTo(Command command)
     {
-        foreach (Option option in (Option[])[_model.Temperature, _model.Set, Scheme, Steps, Cut, Grading, Decomposition, BondExponent, Seed, _machine.Threads, _machine.Backend])
+        foreach (Option option in (Option[])[_model.Temperature, _model.Set, Scheme, Steps, Cut, Grading, Form, Decomposition, BondExponent, Seed, _machine.Threads, _machine.Backend])
             command.Options.Add(option);
         command.Arguments.Add(_model.Model);
     }
@@ -48,6 +50,7 @@ internal sealed class FlowOptions
             Steps = result.GetRequiredValue(Steps),
             CutsAnywhere = result.GetRequiredValue(Cut) == "anywhere",
             IsGraded = result.GetRequiredValue(Grading) == "on",
+            Form = NetworkForms.Read(result.GetRequiredValue(Form)),
             Decomposition = Enum.Parse<DecompositionMode>(result.GetRequiredValue(Decomposition), ignoreCase: true),
             Seed = result.GetRequiredValue(Seed),
             Threads = result.GetRequiredValue(_machine.Threads),

@@ -1,5 +1,6 @@
 using TensorRG.CoarseGraining;
 using TensorRG.Models;
+using TensorRG.Models.Lattices;
 using TensorRG.Runs;
 using TensorRG.Tensors.Decompositions;
 
@@ -21,6 +22,8 @@ internal sealed record FlowRequest
     public bool CutsAnywhere { get; init; }
 
     public bool IsGraded { get; init; }
+
+    public NetworkForm Form { get; init; }
 
     public DecompositionMode Decomposition { get; init; }
 
@@ -51,6 +54,6 @@ internal sealed record FlowRequest
     {
         var cut = new CutRule(bondDimension, CutsAnywhere ? 0 : CutRule.DefaultMultipletGap);
         var settings = new SchemeSettings(cut) { BondExponent = BondExponent, Decomposition = Decomposition, Seed = Seed };
-        return FlowFactory.Describe(Parameters, Scheme, settings, Steps, IsGraded, Backend);
+        return FlowFactory.Describe(Parameters, Scheme, settings, Steps, IsGraded, Backend, Form);
     }
 }

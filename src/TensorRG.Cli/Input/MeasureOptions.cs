@@ -2,7 +2,6 @@ using System.CommandLine;
 using System.CommandLine.Parsing;
 using System.Globalization;
 using System.Numerics;
-using TensorRG.Models.Lattices;
 
 namespace TensorRG.Cli.Input;
 
@@ -16,7 +15,7 @@ internal sealed class MeasureOptions
     private readonly MachineOptions _machine;
     private readonly Option<int> _bondDimension = NumberOption.Whole("--bond-dimension", "Most states kept on a bond (chi).", DefaultBondDimension, 1, FlowOptions.LargestBondDimension);
     private readonly Option<string> _method = ChoiceOption.OneOf("--method", "'boundary': infinite lattice, from fixed points of the row-to-row transfer matrix; 'blocks': HOTRG with impurity tensors.", "boundary", "boundary", "blocks");
-    private readonly Option<string> _form = ChoiceOption.OneOf("--form", "Form of the tensor network.", "auto", [.. Enum.GetNames<NetworkForm>().Select(static n => n.ToLowerInvariant())]);
+    private readonly Option<string> _form = ChoiceOption.OneOf("--form", "Form of the tensor network.", "auto", NetworkForms.Names);
     private readonly Option<long> _seed = NumberOption.Long("--seed", "Seed of the starting states.", 1);
 
     private readonly Option<string> _observables = new("--observables", "-o")
@@ -57,7 +56,7 @@ internal sealed class MeasureOptions
         Method = result.GetRequiredValue(_method),
         BondDimension = result.GetRequiredValue(_bondDimension),
         TorusLength = result.GetValue(_torus),
-        Form = Enum.Parse<NetworkForm>(result.GetRequiredValue(_form), ignoreCase: true),
+        Form = NetworkForms.Read(result.GetRequiredValue(_form)),
         Seed = result.GetRequiredValue(_seed),
         Threads = result.GetRequiredValue(_machine.Threads),
         Backend = result.GetRequiredValue(_machine.Backend),

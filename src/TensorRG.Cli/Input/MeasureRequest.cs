@@ -31,7 +31,7 @@ internal sealed record MeasureRequest
     public MeasurementInputs Inputs(ParameterSet parameters) => new()
     {
         Parameters = parameters,
-        Quantities = Quantities ?? QuantityList.All(parameters),
+        Quantities = Quantities ?? [.. QuantityCatalogue.Defaults(parameters)],
         Method = Method,
         BondDimension = BondDimension,
         TorusLength = TorusLength,

@@ -5,7 +5,7 @@ namespace TensorRG.Cli.Input;
 /// <summary>The argument and the options that say of which model; shared by all commands that compute.</summary>
 internal sealed class ModelOptions
 {
-    public Argument<string> Model { get; } = TextInput.Required("model", "Name of a model; 'tensorrg models' lists them.");
+    public Argument<string> Model { get; } = TextInput.Required("model", ModelSource.Help);
 
     public Option<string> Temperature { get; } = new("--temperature", "-T")
     {
@@ -15,7 +15,7 @@ internal sealed class ModelOptions
 
     public Option<string[]> Set { get; } = new("--set", "-s")
     {
-        Description = "Value of a model parameter; repeat for more.",
+        Description = "Value of a model parameter, complex where the model allows it; repeat for more.",
         HelpName = "NAME=VALUE",
     };
 

@@ -1,24 +1,20 @@
 using TensorRG.Models;
+using TensorRG.Models.Files;
 
 namespace TensorRG.Cli.Input;
 
-/// <summary>The one place where a word of the command line becomes a model, and where a stored model comes back.</summary>
+/// <summary>The one place where a word of the command line becomes a model.</summary>
 internal static class ModelSource
 {
-    /// <summary>The model of a name.</summary>
-    /// <exception cref="ModelException">There is none.</exception>
-    public static Model Find(string nameOrPath) => ModelCatalogue.Find(nameOrPath);
+    /// <summary>What the command line says of a model.</summary>
+    public const string Help = "Name of a model (see 'tensorrg models'), or the path of a model file ending in .toml.";
 
-    /// <summary>The text that defines a model; null for one of the catalogue.</summary>
-    public static string? Definition(Model model)
-    {
-        ArgumentNullException.ThrowIfNull(model);
-        return null;
-    }
+    /// <summary>The model of a name or of a file.</summary>
+    /// <exception cref="ModelException">There is none, or the file is not right.</exception>
+    public static Model Find(string nameOrPath) => IsPath(nameOrPath) ? ModelFile.Load(nameOrPath) : ModelCatalogue.Find(nameOrPath);
 
-    /// <summary>A stored model: from the text that defines it, or of the catalogue.</summary>
-    /// <exception cref="ModelException">This program does not know it.</exception>
-    public static Model Restore(string name, string? definition) => definition is null
-        ? ModelCatalogue.Find(name)
-        : throw new ModelException($"The model '{name}' comes from a file, which this version cannot read. Use the version that stored it.");
+    private static bool IsPath(string text)
+        => text.EndsWith(".toml", StringComparison.OrdinalIgnoreCase)
+        || text.Contains(Path.DirectorySeparatorChar, StringComparison.Ordinal)
+        || text.Contains(Path.AltDirectorySeparatorChar, StringComparison.Ordinal);
 }

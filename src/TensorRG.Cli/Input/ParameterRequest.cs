@@ -14,7 +14,7 @@ internal sealed record ParameterRequest(Model Model, ImmutableArray<KeyValuePair
     /// <exception cref="UsageException">Contradictory or unreadable options.</exception>
     public static ParameterRequest Create(Model model, string? temperature, string[] settings)
     {
-        List<KeyValuePair<string, double>> given = [.. settings.Select(ReadSetting)];
+        List<KeyValuePair<string, double>> given = [.. settings.SelectMany(s => ReadSetting(model, s))];
         if (temperature is null)
             return new ParameterRequest(model, [.. given], AtCritical: false);
         if (!model.HasTemperature)
@@ -56,13 +56,13 @@ internal sealed record ParameterRequest(Model Model, ImmutableArray<KeyValuePair
         throw new UsageException($"{option} takes a finite number, such as 2.5{hint}, not '{text}'. Use a point, not a comma, for decimals.");
     }
 
-    private static KeyValuePair<string, double> ReadSetting(string text)
+    private static IEnumerable<KeyValuePair<string, double>> ReadSetting(Model model, string text)
     {
         int equals = text.IndexOf('=', StringComparison.Ordinal);
         if (equals <= 0)
             throw new UsageException($"--set takes NAME=VALUE, such as --set h=0.1, not '{text}'.");
         string name = text[..equals].Trim();
-        return KeyValuePair.Create(name, ReadNumber($"--set {name}", text[(equals + 1)..]));
+        return model.Settings(name, text[(equals + 1)..].Trim());
     }
 
     private static ParameterDefinition TemperatureOf(Model model)

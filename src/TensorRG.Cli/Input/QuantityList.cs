@@ -1,15 +1,10 @@
 using System.Collections.Immutable;
-using TensorRG.Models;
-using TensorRG.Models.Lattices;
 
 namespace TensorRG.Cli.Input;
 
 /// <summary>The list of what to measure. Whether a model has a quantity the measurer says.</summary>
 internal static class QuantityList
 {
-    /// <summary>An observable that serves others and is not shown by itself.</summary>
-    private const string Hidden = "log-weight";
-
     /// <summary>Reads names separated by commas.</summary>
     /// <exception cref="UsageException">A name is empty or stands twice.</exception>
     public static ImmutableArray<string> Read(string text)
@@ -20,14 +15,5 @@ internal static class QuantityList
         if (names.GroupBy(static n => n).FirstOrDefault(static g => g.Count() > 1) is { } twice)
             throw new UsageException($"--observables names '{twice.Key}' twice. Give it once.");
         return names;
-    }
-
-    /// <summary>All that a model has.</summary>
-    public static ImmutableArray<string> All(ParameterSet parameters)
-    {
-        string[] thermal = parameters.Model.HasTemperature ? ["energy", "entropy", "specific-heat"] : [];
-        IEnumerable<string> own = parameters.Model.System(parameters)?.Observables.Select(static (LocalObservable o) => o.Name).Where(static n => n != Hidden) ?? [];
-        string[] always = ["ln-z"];
-        return [.. always.Concat(thermal).Concat(own).Distinct()];
     }
 }
