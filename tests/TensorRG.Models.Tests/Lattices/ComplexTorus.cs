@@ -1,5 +1,4 @@
 using System.Numerics;
-using TensorRG.Models.Lattices;
 
 namespace TensorRG.Models.Tests.Lattices;
 

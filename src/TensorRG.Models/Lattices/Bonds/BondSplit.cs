@@ -45,12 +45,26 @@ internal sealed class BondSplit
     /// <param name="impurities">Columns that impurities send; made only if needed.</param>
     public LegBasis Find(Complex[,] weights, Func<IEnumerable<Complex[,]>> impurities)
     {
-        if (!balances && sectors.TrueForAll(s => IsIndependent(Rows(s.Vectors, weights))))
+        if (!balances && (IsDiagonal(weights) || sectors.TrueForAll(s => IsIndependent(Rows(s.Vectors, weights)))))
             return Assemble([.. sectors.SelectMany(static (s, k) => s.Vectors.Select((_, j) => (k, Unit(j, s.Vectors.Length), 1.0)))]);
         List<(int Sector, Complex[] Vector, double Value)> states = Reached(weights);
         if (states.Count < sectors.Sum(static s => s.Vectors.Length))
             Extend(states, [.. impurities()]);
         return Assemble(states);
+    }
+
+    private static bool IsDiagonal(Complex[,] matrix)
+    {
+        int rows = matrix.GetLength(0);
+        for (int j = 0; j < matrix.GetLength(1); j++)
+        {
+            for (int i = 0; i < rows; i++)
+            {
+                if (i != j % rows && matrix[i, j] != 0)
+                    return false;
+            }
+        }
+        return true;
     }
 
     // Small rows count as much as large ones: a state of small local weight may be one that no configuration of the lattice can do without.

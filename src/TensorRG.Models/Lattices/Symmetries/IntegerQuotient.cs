@@ -61,14 +61,19 @@ internal sealed class IntegerQuotient
         return row;
     }
 
-    // Euclid on two rows until the second has a zero in the column.
+    // Euclid on two rows until the second has a zero in the column. The first, whose entry is not zero, changes only if that entry gets smaller:
+    // else rows and columns could undo each other's work for ever.
     private static void Reduce(BigInteger[] first, BigInteger[] second, int column)
     {
-        while (!second[column].IsZero)
+        while (true)
         {
-            BigInteger times = BigInteger.Divide(first[column], second[column]);
+            BigInteger times = BigInteger.Divide(second[column], first[column]);
             for (int j = 0; j < first.Length; j++)
-                (first[j], second[j]) = (second[j], first[j] - (times * second[j]));
+                second[j] -= times * first[j];
+            if (second[column].IsZero)
+                return;
+            for (int j = 0; j < first.Length; j++)
+                (first[j], second[j]) = (second[j], first[j]);
         }
     }
 
@@ -105,11 +110,15 @@ internal sealed class IntegerQuotient
 
     private void ReduceColumns(int k, int j)
     {
-        while (!rows[k][j].IsZero)
+        while (true)
         {
-            BigInteger times = BigInteger.Divide(rows[k][k], rows[k][j]);
+            BigInteger times = BigInteger.Divide(rows[k][j], rows[k][k]);
             foreach (BigInteger[] row in rows.Concat(columns))
-                (row[k], row[j]) = (row[j], row[k] - (times * row[j]));
+                row[j] -= times * row[k];
+            if (rows[k][j].IsZero)
+                return;
+            foreach (BigInteger[] row in rows.Concat(columns))
+                (row[k], row[j]) = (row[j], row[k]);
         }
     }
 }

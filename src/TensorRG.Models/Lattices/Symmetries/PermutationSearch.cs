@@ -49,9 +49,9 @@ internal sealed class PermutationSearch
             int next = Array.IndexOf(map, -1);
             if (next < 0)
                 return test(map);
-            if (length > 1 && Cycle(next, next, 1, length, allowFixed, test))
+            if (Enumerable.Range(0, states).Count(s => tables.Alike(next, s)) >= length && Cycle(next, next, 1, length, allowFixed, test))
                 return true;
-            return (allowFixed || length == 1) && Try(next, next, () => Cycle(-1, -1, 0, length, allowFixed, test));
+            return allowFixed && Try(next, next, () => Cycle(-1, -1, 0, length, allowFixed, test));
         }
         if (count == length)
             return Try(last, start, () => Cycle(-1, -1, 0, length, allowFixed, test));
