@@ -31,7 +31,7 @@ internal static class ParameterReader
         names.Add(entry.Key, entry.Start, "parameter");
         TableReader table = entry.Value.Kind == NodeKind.Table ? new(entry.Value, $"parameter '{entry.Key}'") : Short(entry);
         table.Allow("default", "min", "max", "whole", "unit", "meaning", "complex", "shorthand");
-        Node value = table.Required("default", $"{entry.Key} = {{ default = 1 }}");
+        Node value = table.Required("default", "1");
         Complex start = TableReader.AsExpression(value, Scope.Empty, ExpressionType.Number, "'default'").Number([]);
         bool isComplex = table.Truth("complex");
         if (!isComplex && start.Imaginary != 0)
