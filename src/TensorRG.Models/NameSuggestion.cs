@@ -3,7 +3,7 @@ namespace TensorRG.Models;
 /// <summary>Finds the name that a person most likely meant.</summary>
 public static class NameSuggestion
 {
-    /// <summary>" Did you mean 'x'?" for the known name nearest in edits (Levenshtein distance without regard to case), or nothing where none is near.</summary>
+    /// <summary>" Did you mean 'x'?" for the known name nearest in edits (Levenshtein distance without regard to case), or nothing where none is near. For a single letter only the other case counts as near.</summary>
     /// <param name="name">The name that was given.</param>
     /// <param name="known">The names there are.</param>
     public static string Text(string name, IEnumerable<string> known)
@@ -11,7 +11,7 @@ public static class NameSuggestion
         ArgumentNullException.ThrowIfNull(name);
         ArgumentNullException.ThrowIfNull(known);
         string? nearest = known.MinBy(k => Distance(name, k));
-        int allowed = Math.Max(1, name.Length / 2);
+        int allowed = name.Length == 1 ? 0 : Math.Max(1, name.Length / 2);
         return nearest is not null && Distance(name, nearest) <= allowed ? $" Did you mean '{nearest}'?" : "";
     }
 

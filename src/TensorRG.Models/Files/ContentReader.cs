@@ -20,9 +20,9 @@ internal sealed class ContentReader
     private ContentReader(SourceText source)
     {
         Node root = NodeReader.Read(source);
-        top = new(root, "the top of the file");
+        top = new(root, "the top level of the file");
         top.Allow("name", "title", "description", "lattice", "solution", "parameters", "constants", "site", "energy", "weight", "require", "vertex", "observables", "network", "critical", "reference");
-        lattice = Choice("lattice", top.RequiredText("lattice", "lattice = \"square\""), top, Lattices);
+        lattice = Choice("lattice", top.RequiredText("lattice", "\"square\""), top, Lattices);
         names = new(source);
         ImmutableArray<FileParameter> parameters = ParameterReader.Read(top.Find("parameters"), names);
         globals = Globals.Read(parameters, top.Find("constants"), names);
@@ -114,7 +114,7 @@ internal sealed class ContentReader
 
     private string Name()
     {
-        string name = top.RequiredText("name", "name = \"my-model\"");
+        string name = top.RequiredText("name", "\"my-model\"");
         return IsHyphenated(name)
             ? name
             : throw top.Find("name")!.Error($"The name {SourceText.Quote(name)} is not valid. Use up to {Limits.NameLength} lower case letters, digits and hyphens, a letter first, such as \"my-model\".");
@@ -126,7 +126,7 @@ internal sealed class ContentReader
             return NetworkForm.Auto;
         TableReader table = TableReader.Of(node, "[network]");
         table.Allow("form");
-        NetworkForm form = Choice("form", table.RequiredText("form", "form = \"face\""), table, Forms);
+        NetworkForm form = Choice("form", table.RequiredText("form", "\"face\""), table, Forms);
         bool onEdges = top.Find("vertex") is not null;
         if (form != NetworkForm.Auto && onEdges != (form == NetworkForm.Vertex))
             throw table.Find("form")!.Error($"The form '{Lower(form)}' is for variables on {(onEdges ? "sites" : "edges")}. {(onEdges ? "Remove the key" : "Choose bond, face, row or triangles, or remove the key")}.");

@@ -1,3 +1,4 @@
+using System.Buffers;
 using System.Text;
 
 namespace TensorRG.Models.Files;
@@ -5,6 +6,9 @@ namespace TensorRG.Models.Files;
 /// <summary>Reads the text of a model file and refuses what is none.</summary>
 internal static class FileText
 {
+    // Tab and line ends are text.
+    private static readonly SearchValues<char> Controls = SearchValues.Create([.. Enumerable.Range(0, 32).Where(c => c is not ('\t' or '\n' or '\r')).Select(c => (char)c), '\u007F']);
+
     private const string Convert = "Save it as UTF-8 text.";
 
     /// <summary>The text of a file.</summary>
@@ -22,15 +26,17 @@ internal static class FileText
     /// <summary>The text, checked.</summary>
     /// <param name="text">The text.</param>
     /// <param name="path">Path for messages.</param>
-    /// <exception cref="ModelFileException">Too large, empty, or with NUL characters.</exception>
+    /// <exception cref="ModelFileException">Too large, empty, or with control characters.</exception>
     public static SourceText Check(string text, string path)
     {
         if (text.Length > Limits.FileBytes)
             throw TooLarge(path);
         SourceText source = new(path, text.StartsWith('\uFEFF') ? text[1..] : text);
-        int nul = source.Text.IndexOf('\0', StringComparison.Ordinal);
-        if (nul >= 0)
-            throw source.Error(nul, $"A NUL character stands in the file: it is no UTF-8 text, perhaps UTF-16. {Convert}");
+        int control = source.Text.AsSpan().IndexOfAny(Controls);
+        if (control >= 0)
+            throw source.Error(control, source.Text[control] == '\0'
+                ? $"A NUL character stands in the file: it is no UTF-8 text, perhaps UTF-16. {Convert}"
+                : $"A control character (code {(int)source.Text[control]}) stands in the file. Remove it.");
         if (string.IsNullOrWhiteSpace(source.Text))
             throw Whole(path, "The file is empty. A model file needs at least name, lattice and a table [site] or [vertex].");
         return source;
@@ -70,7 +76,7 @@ internal static class FileText
     {
         for (int at = 0; at < bytes.Length;)
         {
-            if (Rune.DecodeFromUtf8(bytes[at..], out _, out int length) != System.Buffers.OperationStatus.Done)
+            if (Rune.DecodeFromUtf8(bytes[at..], out _, out int length) != OperationStatus.Done)
                 return at;
             at += length;
         }

@@ -28,10 +28,10 @@ internal static class ParameterReader
 
     private static FileParameter One(NodeEntry entry, NameRegistry names)
     {
-        names.Add(entry.Key, entry.Start, "parameter");
+        names.AddParameter(entry.Key, entry.Start);
         TableReader table = entry.Value.Kind == NodeKind.Table ? new(entry.Value, $"parameter '{entry.Key}'") : Short(entry);
         table.Allow("default", "min", "max", "whole", "unit", "meaning", "complex", "shorthand");
-        Node value = table.Required("default", $"{entry.Key} = {{ default = 1 }}");
+        Node value = table.Required("default", "1");
         Complex start = TableReader.AsExpression(value, Scope.Empty, ExpressionType.Number, "'default'").Number([]);
         bool isComplex = table.Truth("complex");
         if (!isComplex && start.Imaginary != 0)

@@ -61,7 +61,7 @@ internal sealed class ReferenceReader(Globals globals)
     }
 
     private Expression Value(TableReader table, string key, string example)
-        => TableReader.AsExpression(table.Required(key, $"{key} = {example}"), globals.Scope, ExpressionType.Number, $"'{key}'");
+        => TableReader.AsExpression(table.Required(key, example), globals.Scope, ExpressionType.Number, $"'{key}'");
 
     private Expression? When(TableReader table)
         => table.Find("when") is { } node ? TableReader.AsExpression(node, globals.Scope, ExpressionType.Truth, "'when'") : null;

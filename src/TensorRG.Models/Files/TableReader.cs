@@ -47,10 +47,10 @@ internal sealed class TableReader(Node table, string where)
 
     /// <summary>The value of a key that must be there.</summary>
     /// <param name="key">The key.</param>
-    /// <param name="example">How to write it.</param>
+    /// <param name="example">A value.</param>
     /// <exception cref="ModelFileException">It is not there.</exception>
     public Node Required(string key, string example)
-        => Find(key) ?? throw table.Error($"The key '{key}' is missing in {where}. Add it, such as {example}.");
+        => Find(key) ?? throw table.Error($"The key '{key}' is missing in {where}. Add it, such as {key} = {example}.");
 
     /// <summary>The value of a text, or null.</summary>
     /// <param name="key">The key.</param>
@@ -59,7 +59,7 @@ internal sealed class TableReader(Node table, string where)
 
     /// <summary>The value of a text that must be there.</summary>
     /// <param name="key">The key.</param>
-    /// <param name="example">How to write it.</param>
+    /// <param name="example">A value.</param>
     /// <exception cref="ModelFileException">It is not there, empty or no text.</exception>
     public string RequiredText(string key, string example)
     {

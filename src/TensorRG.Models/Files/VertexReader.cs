@@ -25,7 +25,7 @@ internal sealed class VertexReader(TableReader table, LatticeKind lattice, Globa
 
     /// <summary>The variable of an edge.</summary>
     /// <exception cref="ModelFileException">It is not there or not right.</exception>
-    public SiteVariable Edge() => new VariableReader(globals.Scope).Read("edge", table.Required("edge", "edge = [0, 1]"));
+    public SiteVariable Edge() => new VariableReader(globals.Scope).Read("edge", table.Required("edge", "[0, 1]"));
 
     /// <summary>The term of weight or energy, if there is one.</summary>
     /// <param name="name">weight or energy.</param>
@@ -57,7 +57,7 @@ internal sealed class VertexReader(TableReader table, LatticeKind lattice, Globa
     }
 
     private Expression Value(TableReader row, string name)
-        => TableReader.AsExpression(row.Required(name, Example()), globals.Scope, ExpressionType.Number, $"'{name}'");
+        => TableReader.AsExpression(row.Required(name, "1"), globals.Scope, ExpressionType.Number, $"'{name}'");
 
-    private string Example() => $"Write table = [{{ {string.Join(", ", key.Legs.Select(l => $"{l} = 0"))}, weight = 1 }}, ...]";
+    private string Example() => $"Write table = [{{ {string.Join(", ", key.Legs.Select(l => $"{l} = 0"))}, weight = 1 }}], with a row for each vertex that occurs.";
 }

@@ -78,6 +78,8 @@ internal static class Samples
         T = { default = 1.5, min = 0.1 }
         q = { default = 3, whole = true, min = 2, max = 5 }
         h = { default = "0.1i", complex = true, min = -1, max = 1, meaning = "Field" }
+        [constants]
+        K = "-h/T"
         [site]
         k = "0..q-1"
         m = [0, "1/2"]
@@ -87,7 +89,7 @@ internal static class Samples
         diagonal_1 = "0.2*m_i"
         diagonal_2 = "0.3*m_j"
         bond = "k_i*m_j"
-        site = "-h*k_i"
+        site = "K*T*k_i"
         [network]
         form = "face"
         """;
