@@ -1,4 +1,5 @@
 using System.CommandLine;
+using TensorRG.Models;
 using TensorRG.Cli.Execution;
 using TensorRG.Cli.Input;
 using TensorRG.Cli.Output;
