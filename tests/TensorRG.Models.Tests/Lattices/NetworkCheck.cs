@@ -37,14 +37,19 @@ internal static class NetworkCheck
         int block = built.Network.SitesPerVertex == 4 * system.SitesPerCell ? 2 : 1;
         var oracle = new TorusOracle(system, options, block * lx, block * ly);
         var torus = new ComplexTorus(built.Network, lx, ly);
+        if (double.IsNegativeInfinity(oracle.LogScale))
+        {
+            Near(0, torus.Contract((_, _) => torus.Vertex), 1, "Z of a torus that allows nothing");
+            return;
+        }
         double factor = Math.Exp((lx * ly * built.Network.LogPrefactor) - oracle.LogScale);
         Near(oracle.Z, factor * torus.Contract((_, _) => torus.Vertex), oracle.Scale, "Z");
         for (int i = 0; i < options.Observables.Length; i++)
         {
             Impurity impurity = built.Impurities[i];
             Complex[] first = torus.Dense((u, l, d, r) => impurity.Element(1, u, l, d, r)), second = torus.Dense((u, l, d, r) => impurity.Element(2, u, l, d, r));
-            Near(oracle.Moments[i].First, factor * torus.One(first), oracle.MomentScales[i].First, impurity.Name);
-            Near(oracle.Moments[i].Second, factor * (torus.One(second) + torus.Two(first)), oracle.MomentScales[i].Second, impurity.Name + "^2");
+            Near(oracle.Moments[i].First, factor * torus.One(first), Math.Max(oracle.Scale, oracle.MomentScales[i].First), impurity.Name);
+            Near(oracle.Moments[i].Second, factor * (torus.One(second) + torus.Two(first)), Math.Max(oracle.Scale, oracle.MomentScales[i].Second), impurity.Name + "^2");
         }
     }
 

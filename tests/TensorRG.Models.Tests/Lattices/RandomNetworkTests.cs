@@ -19,7 +19,7 @@ public sealed class RandomNetworkTests
                         Check(random, built, form);
                 }
             },
-            iter: 150,
+            iter: 110,
             threads: 1);
 
     private static void Check(RandomSystem random, ModelNetwork built, NetworkForm form)

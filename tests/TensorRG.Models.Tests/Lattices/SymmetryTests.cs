@@ -41,7 +41,7 @@ public sealed class SymmetryTests
         int[] angle = [3, 0, 5, 1, 6, 2, 4];
         LatticeSystem system = Systems.Pairs(LatticeKind.Square, 7, (a, b) => Math.Cos(2 * Math.PI * (angle[a] - angle[b]) / 7), Cluster.Bond1, Cluster.Bond2);
         ModelNetwork built = NetworkBuilder.Build(system, new NetworkOptions());
-        Assert.Equal([7], built.Network.GroupOrders);
+        Assert.Equal([7], built.Network.GroupOrders.ToArray());
         Assert.True(built.Network.IsReal);
     }
 
@@ -50,7 +50,7 @@ public sealed class SymmetryTests
     {
         LatticeSystem system = Systems.Pairs(LatticeKind.Square, 4, static (a, b) => Math.Cos((2 * Math.PI * (a - b) / 4) + 0.3), Cluster.Bond1, Cluster.Bond2);
         ModelNetwork built = NetworkBuilder.Build(system, new NetworkOptions { Observables = ["energy"] });
-        Assert.Equal([2], built.Network.GroupOrders);
+        Assert.Equal([2], built.Network.GroupOrders.ToArray());
         Assert.True(built.Network.IsReal);
         NetworkCheck.Compare(built, system, new NetworkOptions { Observables = ["energy"] }, 2, 2);
     }
@@ -107,9 +107,9 @@ public sealed class SymmetryTests
     {
         LatticeSystem system = Systems.Edges(LatticeKind.Square, 2, static s => s[0] + s[1] == s[2] + s[3] ? (s[0] == s[1] ? 1.0 : s[0] == s[2] ? 0.8 : 1.3) : 0);
         ModelNetwork built = NetworkBuilder.Build(system, new NetworkOptions());
-        Assert.Equal([0], built.Network.GroupOrders);
-        Assert.Equal([0, 1], built.Network.VerticalBond.Select(static s => s.Charge[0]));
-        Assert.Equal([0, 1], built.Network.HorizontalBond.Select(static s => s.Charge[0]));
+        Assert.Equal([0], built.Network.GroupOrders.ToArray());
+        Assert.Equal([0, 1], built.Network.VerticalBond.Select(static s => s.Charge[0]).ToArray());
+        Assert.Equal([0, 1], built.Network.HorizontalBond.Select(static s => s.Charge[0]).ToArray());
         Assert.StartsWith("U(1)", built.Symmetry, StringComparison.Ordinal);
     }
 
@@ -117,13 +117,13 @@ public sealed class SymmetryTests
     public void Eight_vertex_conserves_parity()
     {
         LatticeSystem system = Systems.Edges(LatticeKind.Square, 2, static s => s.Sum() % 2 == 0 ? 1 + (0.1 * s[0]) + (0.3 * s[1] * s[2]) : 0);
-        Assert.Equal([2], NetworkBuilder.Build(system, new NetworkOptions()).Network.GroupOrders);
+        Assert.Equal([2], NetworkBuilder.Build(system, new NetworkOptions()).Network.GroupOrders.ToArray());
     }
 
     [Fact]
     public void Dimers_on_the_honeycomb_lattice_conserve_lines_and_on_the_square_lattice_of_one_vertex_nothing()
     {
-        Assert.Equal([0], NetworkBuilder.Build(Systems.Edges(LatticeKind.Honeycomb, 2, static s => s.Sum() == 1 ? 1 : 0), new NetworkOptions()).Network.GroupOrders);
+        Assert.Equal([0], NetworkBuilder.Build(Systems.Edges(LatticeKind.Honeycomb, 2, static s => s.Sum() == 1 ? 1 : 0), new NetworkOptions()).Network.GroupOrders.ToArray());
         Assert.Empty(NetworkBuilder.Build(Systems.Edges(LatticeKind.Square, 2, static s => s.Sum() == 1 ? 1 : 0), new NetworkOptions()).Network.GroupOrders);
     }
 
@@ -146,7 +146,7 @@ public sealed class SymmetryTests
         ModelNetwork built = NetworkBuilder.Build(system, new NetworkOptions { Form = NetworkForm.Face, Graded = false });
         AssertWhole(built.Network);
         NetworkCheck.Compare(built, system, new NetworkOptions(), 2, 2);
-        NetworkCheck.Compare(built, system, new NetworkOptions(), 3, 1);
+        NetworkCheck.Compare(built, system, new NetworkOptions(), 2, 4);
     }
 
     // In the basis of the flip every element is a sum or difference of equal weights 0 or 1: their ratios are whole numbers.

@@ -3,8 +3,8 @@ namespace TensorRG.Models.Lattices.Symmetries;
 /// <summary>Looks for permutations of the states that keep all tables, by trial with retreat; the effort is bounded and what was not found by then is not found.</summary>
 internal sealed class PermutationSearch
 {
-    private const int MaxNodes = 100_000;
-    private const long MaxComparisons = 100_000_000;
+    private const int MaxNodes = 20_000;
+    private const long MaxComparisons = 20_000_000;
 
     private readonly int states;
     private readonly TableSymmetry tables;

@@ -64,7 +64,7 @@ internal sealed class TableSymmetry
             ? double.IsInfinity(a.Real) && double.IsInfinity(b.Real)
             : Complex.Abs(a - b) <= allowed;
 
-    // The sorted values of the slice of each table with the state at each place, rounded well above the tolerance.
+    // The sorted values of the slice of each table with the state at each place, rounded well above the tolerance (adding zero makes minus zero zero).
     private string Mark(int state)
     {
         var parts = new List<string>();
@@ -81,5 +81,5 @@ internal sealed class TableSymmetry
     }
 
     private static string Rounded(Complex value, double unit)
-        => double.IsInfinity(value.Real) ? "x" : FormattableString.Invariant($"{Math.Round(value.Real / unit):R};{Math.Round(value.Imaginary / unit):R}");
+        => double.IsInfinity(value.Real) ? "x" : FormattableString.Invariant($"{Math.Round(value.Real / unit) + 0.0:R};{Math.Round(value.Imaginary / unit) + 0.0:R}");
 }
