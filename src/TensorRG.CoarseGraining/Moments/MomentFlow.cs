@@ -8,7 +8,8 @@ namespace TensorRG.CoarseGraining.Moments;
 /// <summary>
 /// Moments &lt;O^n&gt; of sums over all sites of finite tori: HOTRG with higher-order impurity tensors (S. Morita, N. Kawashima,
 /// Comput. Phys. Commun. 236, 65 (2019)). T^(n) is the tensor of a block weighted with the n-th power of the block's O; all are joined with the isometries
-/// of T^(0), T'^(n) = sum_k binom(n, k) join(T^(k), T^(n-k)), and &lt;O^n&gt; = Tr T^(n) / Tr T^(0). Several observables share the isometries.
+/// of one density, T'^(n) = sum_k binom(n, k) join(T^(k), T^(n-k)), and &lt;O^n&gt; = Tr T^(n) / Tr T^(0). Several observables share the isometries,
+/// which follow the density of T^(0) and, unlike the published ones, that of every T^(1): what responds to a field is kept too.
 /// Cost (order + 1)(order + 2) / 2 times that of HOTRG for each observable, O(chi^7), memory O(chi^5). The flow gives the same bits on any number of threads.
 /// </summary>
 /// <typeparam name="T">Element type.</typeparam>
