@@ -14,6 +14,10 @@ internal static class PanelPainter
 
     private const float BarWidth = 1.5f;
 
+    // Half widths of caps as fractions of the axis: at most this, and this over the number of points.
+    private const double WidestCap = 0.006;
+    private const double NarrowestGap = 0.3;
+
     public static void Paint(SKCanvas canvas, PanelData data, PanelArea area, Figure figure, PlotFont font)
     {
         var plot = new Plot();
@@ -86,7 +90,7 @@ internal static class PanelPainter
 
     private static void AddSeries(Plot plot, PanelData data, PlottedSeries series, double hidden)
     {
-        var least = series.HasMarkers ? hidden : 0;
+        var least = series.HasMarkers ? hidden : hidden * LineWidth / MarkerSize;
         foreach (var point in series.Points.Where(p => p.HasBar && p.BarHigh - p.BarLow > least)) AddBar(plot, data, series, point);
         if (series.HasLine)
         {
@@ -106,7 +110,7 @@ internal static class PanelPainter
     /// <summary>A bar with caps; an end that leaves the panel has none, which shows that it goes on.</summary>
     private static void AddBar(Plot plot, PanelData data, PlottedSeries series, PlottedPoint point)
     {
-        var half = 0.006 * data.XRange.Length;
+        var half = Math.Min(WidestCap, NarrowestGap / series.Points.Count()) * data.XRange.Length; // caps of many points must not run together
         var low = Math.Max(point.BarLow, data.YRange.Low);
         AddStroke(plot, series, point.X, low, point.X, data.NearFrame(point.BarHigh));
         AddStroke(plot, series, point.X - half, data.NearFrame(point.BarHigh), point.X + half, data.NearFrame(point.BarHigh));
