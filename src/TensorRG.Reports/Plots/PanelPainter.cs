@@ -81,8 +81,10 @@ internal static class PanelPainter
     private static void AddGuide(Plot plot, PanelData data, Guide guide)
     {
         var position = data.Position(guide);
-        if (guide.IsVertical) plot.Add.VerticalLine(position, GuideWidth, Palette.Guide, LinePattern.Dotted);
-        else plot.Add.HorizontalLine(position, GuideWidth, Palette.Guide, LinePattern.Dotted);
+        ImmutableArray<Coordinates> ends = guide.IsVertical
+            ? [new(position, data.YRange.Low), new(position, data.YRange.High)]
+            : [new(data.XRange.Low, position), new(data.XRange.High, position)];
+        plot.Add.Plottable(new DashedLine(ends, isDotted: true, GuideWidth, Palette.Guide));
     }
 
     /// <summary>Length in axis coordinates up to which a bar lies behind its marker: its caps would only spoil the marker's shape.</summary>
@@ -102,9 +104,9 @@ internal static class PanelPainter
 
     private static void AddLine(Plot plot, PanelData data, PlottedSeries series, ImmutableArray<PlottedPoint> run)
     {
-        var line = plot.Add.ScatterLine(run.Select(p => new Coordinates(p.X, data.NearFrame(p.Y))).ToArray(), series.Color);
-        line.LineWidth = series.IsGuide ? GuideWidth : LineWidth;
-        line.LinePattern = series.IsGuide ? LinePattern.Dashed : LinePattern.Solid;
+        Coordinates[] points = [.. run.Select(p => new Coordinates(p.X, data.NearFrame(p.Y)))];
+        if (series.IsGuide) plot.Add.Plottable(new DashedLine([.. points], isDotted: false, GuideWidth, series.Color));
+        else plot.Add.ScatterLine(points, series.Color).LineWidth = LineWidth;
     }
 
     /// <summary>A bar with caps; an end that leaves the panel has none, which shows that it goes on.</summary>
