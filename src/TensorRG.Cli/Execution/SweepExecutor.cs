@@ -26,7 +26,7 @@ internal static class SweepExecutor
         SweepPublication? publication = null;
         var options = new SweepOptions
         {
-            Workers = threads,
+            Concurrency = threads,
             Started = display.Start,
             PointDone = display.Show,
             Completed = points => publication = SweepPublication.Write(folder, points),

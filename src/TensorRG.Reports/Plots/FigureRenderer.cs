@@ -92,15 +92,18 @@ public static class FigureRenderer
     private static void PaintKey(SKCanvas canvas, LegendEntry entry, float centre)
     {
         using var paint = Paint.NewDisposablePaint();
-        var isGuide = entry.Series is null or { IsGuide: true };
-        var line = new LineStyle
+        var end = entry.Left + FigureLayout.LegendKeyWidth;
+        if (entry.Series is null or { IsGuide: true })
         {
-            Width = isGuide ? PanelPainter.GuideWidth : PanelPainter.LineWidth,
-            Color = entry.Series?.Color ?? Palette.Guide,
-            Pattern = entry.Series is null ? LinePattern.Dotted : isGuide ? LinePattern.Dashed : LinePattern.Solid,
-        };
-        if (entry.Series is null or { HasLine: true })
-            line.Render(canvas, new PixelLine(entry.Left, centre, entry.Left + FigureLayout.LegendKeyWidth, centre), paint);
+            using var path = new SKPath();
+            path.MoveTo(entry.Left, centre);
+            path.LineTo(end, centre);
+            Dashes.Draw(canvas, path, isDotted: entry.Series is null, PanelPainter.GuideWidth, entry.Series?.Color ?? Palette.Guide);
+        }
+        else if (entry.Series.HasLine)
+        {
+            new LineStyle { Width = PanelPainter.LineWidth, Color = entry.Series.Color }.Render(canvas, new PixelLine(entry.Left, centre, end, centre), paint);
+        }
         if (entry.Series is { HasMarkers: true } series)
             new MarkerStyle(series.Marker, PanelPainter.MarkerSize, series.Color).Render(canvas, new Pixel(entry.Left + FigureLayout.LegendKeyWidth / 2, centre), paint);
     }

@@ -14,6 +14,10 @@ internal static class PanelPainter
 
     private const float BarWidth = 1.5f;
 
+    // Half widths of caps as fractions of the axis: at most this, and this over the number of points.
+    private const double WidestCap = 0.006;
+    private const double NarrowestGap = 0.3;
+
     public static void Paint(SKCanvas canvas, PanelData data, PanelArea area, Figure figure, PlotFont font)
     {
         var plot = new Plot();
@@ -77,8 +81,10 @@ internal static class PanelPainter
     private static void AddGuide(Plot plot, PanelData data, Guide guide)
     {
         var position = data.Position(guide);
-        if (guide.IsVertical) plot.Add.VerticalLine(position, GuideWidth, Palette.Guide, LinePattern.Dotted);
-        else plot.Add.HorizontalLine(position, GuideWidth, Palette.Guide, LinePattern.Dotted);
+        ImmutableArray<Coordinates> ends = guide.IsVertical
+            ? [new(position, data.YRange.Low), new(position, data.YRange.High)]
+            : [new(data.XRange.Low, position), new(data.XRange.High, position)];
+        plot.Add.Plottable(new DashedLine(ends, isDotted: true, GuideWidth, Palette.Guide));
     }
 
     /// <summary>Length in axis coordinates up to which a bar lies behind its marker: its caps would only spoil the marker's shape.</summary>
@@ -86,7 +92,7 @@ internal static class PanelPainter
 
     private static void AddSeries(Plot plot, PanelData data, PlottedSeries series, double hidden)
     {
-        var least = series.HasMarkers ? hidden : 0;
+        var least = series.HasMarkers ? hidden : hidden * LineWidth / MarkerSize;
         foreach (var point in series.Points.Where(p => p.HasBar && p.BarHigh - p.BarLow > least)) AddBar(plot, data, series, point);
         if (series.HasLine)
         {
@@ -98,15 +104,15 @@ internal static class PanelPainter
 
     private static void AddLine(Plot plot, PanelData data, PlottedSeries series, ImmutableArray<PlottedPoint> run)
     {
-        var line = plot.Add.ScatterLine(run.Select(p => new Coordinates(p.X, data.NearFrame(p.Y))).ToArray(), series.Color);
-        line.LineWidth = series.IsGuide ? GuideWidth : LineWidth;
-        line.LinePattern = series.IsGuide ? LinePattern.Dashed : LinePattern.Solid;
+        Coordinates[] points = [.. run.Select(p => new Coordinates(p.X, data.NearFrame(p.Y)))];
+        if (series.IsGuide) plot.Add.Plottable(new DashedLine([.. points], isDotted: false, GuideWidth, series.Color));
+        else plot.Add.ScatterLine(points, series.Color).LineWidth = LineWidth;
     }
 
     /// <summary>A bar with caps; an end that leaves the panel has none, which shows that it goes on.</summary>
     private static void AddBar(Plot plot, PanelData data, PlottedSeries series, PlottedPoint point)
     {
-        var half = 0.006 * data.XRange.Length;
+        var half = Math.Min(WidestCap, NarrowestGap / series.Points.Count()) * data.XRange.Length; // caps of many points must not run together
         var low = Math.Max(point.BarLow, data.YRange.Low);
         AddStroke(plot, series, point.X, low, point.X, data.NearFrame(point.BarHigh));
         AddStroke(plot, series, point.X - half, data.NearFrame(point.BarHigh), point.X + half, data.NearFrame(point.BarHigh));

@@ -8,6 +8,9 @@ public static class SweepPlot
     /// <summary>Beyond this markers run into one another, and a line says more.</summary>
     private const int MostMarkers = 60;
 
+    private const int MostCellTicks = 12;
+    private const int LongestCellTick = 5;
+
     /// <summary>Lines with error bars over one parameter; exact values as a dashed line, what did not converge in another colour.</summary>
     /// <param name="x">Axis of the parameter.</param>
     /// <param name="abscissas">Its values, in any order.</param>
@@ -45,11 +48,15 @@ public static class SweepPlot
     public static Figure Maps(
         PlotAxis x, ImmutableArray<double> columns, PlotAxis y, ImmutableArray<double> rows, ImmutableArray<SweepQuantity> quantities, string title, string caption)
     {
-        ImmutableArray<PlotPanel> panels = [.. quantities.Select(q => new PlotPanel(x, y, []) { Map = Map(q, columns, rows) })];
+        ImmutableArray<PlotPanel> panels = [.. quantities.Select(q => new PlotPanel(WithTicks(x, columns), WithTicks(y, rows), []) { Map = Map(q, columns, rows) })];
         var signs = quantities.Any(q => q.Converged.Contains(false)) ? "; crosses: not converged" : "";
         var holes = quantities.Any(q => q.Values.Any(v => !double.IsFinite(v))) ? "; grey: no value" : "";
         return new Figure("sweep", title, caption + signs + holes, panels) { Height = quantities.Length == 1 ? 900 : 140 + 560 * quantities.Length };
     }
+
+    /// <summary>Few cells with short values carry these as ticks: they say more than round numbers in between.</summary>
+    private static PlotAxis WithTicks(PlotAxis axis, ImmutableArray<double> values)
+        => values.Length <= MostCellTicks && values.All(v => NumberFormat.RoundTrip(v).Length <= LongestCellTick) ? axis with { TickValues = values } : axis;
 
     private static IEnumerable<DataSeries> Series(SweepQuantity quantity, ImmutableArray<double> abscissas, int[] order)
     {

@@ -11,7 +11,7 @@ public static class SweepDriver
     /// <summary>Runs until all points are there or until stopped.</summary>
     /// <param name="sweep">The folder.</param>
     /// <param name="createMeasurer">Makes a measurer for each worker.</param>
-    /// <param name="options">Workers and callbacks.</param>
+    /// <param name="options">Concurrency and callbacks.</param>
     /// <param name="stop">Asks to stop: handed to the measurers; points at work are dropped.</param>
     /// <exception cref="RunStoreException">The folder is in use or cannot be written, or another version of the algorithms began it.</exception>
     /// <exception cref="Exception">Whatever a measurer throws that is no failure of its point alone, such as too little memory.</exception>
@@ -20,7 +20,7 @@ public static class SweepDriver
         ArgumentNullException.ThrowIfNull(sweep);
         ArgumentNullException.ThrowIfNull(createMeasurer);
         ArgumentNullException.ThrowIfNull(options);
-        ArgumentOutOfRangeException.ThrowIfLessThan(options.Workers, 1);
+        ArgumentOutOfRangeException.ThrowIfLessThan(options.Concurrency, 1);
         if (sweep.Inputs.NumericsVersion != FlowFactory.NumericsVersion)
         {
             throw new RunStoreException(

@@ -6,7 +6,7 @@ namespace TensorRG.Runs.Points;
 public sealed record SweepOptions
 {
     /// <summary>Points worked on at the same time, each with a measurer of its own; at least 1.</summary>
-    public int Workers { get; init; } = 1;
+    public int Concurrency { get; init; } = 1;
 
     /// <summary>Called once before the first point.</summary>
     public Action<SweepStart>? Started { get; init; }

@@ -74,7 +74,7 @@ internal sealed class SweepSession
 
     private void WorkInParallel(CancellationTokenSource stop)
     {
-        int workers = Math.Min(_options.Workers, _open.Count);
+        int workers = Math.Min(_options.Concurrency, _open.Count);
         Thread[] threads = [.. Enumerable.Range(0, Math.Max(0, workers - 1)).Select(_ => new Thread(() => Work(stop)))];
         foreach (Thread thread in threads)
             thread.Start();

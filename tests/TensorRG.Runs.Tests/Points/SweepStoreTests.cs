@@ -34,7 +34,7 @@ public sealed class SweepStoreTests : IDisposable
         foreach (int workers in (int[])[1, 2, 7])
         {
             SweepFolder folder = Create(FormattableString.Invariant($"w{workers}"), SweepSample.Inputs(null, many));
-            SweepSample.Run(folder, new SweepOptions { Workers = workers });
+            SweepSample.Run(folder, new SweepOptions { Concurrency = workers });
             prints.Add(SweepSample.Fingerprint(new DiskFiles(), folder.Path));
         }
 
@@ -46,7 +46,7 @@ public sealed class SweepStoreTests : IDisposable
     {
         using var both = new Barrier(2);
         bool met = true;
-        SweepSample.Run(Create("a"), new SweepOptions { Workers = 2 }, _ => met &= both.SignalAndWait(TimeSpan.FromSeconds(30)));
+        SweepSample.Run(Create("a"), new SweepOptions { Concurrency = 2 }, _ => met &= both.SignalAndWait(TimeSpan.FromSeconds(30)));
         Assert.True(met);
     }
 
