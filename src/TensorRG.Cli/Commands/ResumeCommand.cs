@@ -1,8 +1,8 @@
 using System.CommandLine;
-using TensorRG.Models;
 using TensorRG.Cli.Execution;
 using TensorRG.Cli.Input;
 using TensorRG.Cli.Output;
+using TensorRG.Models;
 using TensorRG.Runs;
 using TensorRG.Runs.Points;
 

@@ -39,7 +39,7 @@ internal sealed class BlockMeasurer(Backend backend) : IMeasurer
         if (inputs.TorusLength is { } length)
             yield return FormattableString.Invariant($"Torus of {length} x {length} cells.");
         else if (breaking is not null)
-            yield return $"Observables that break the symmetry ({string.Join(", ", breaking.Names)}) are root mean squares on a torus of 2^{Doublings} vertices a side: the modulus of the spontaneous value where there is order.";
+            yield return $"Observables that break the symmetry ({string.Join(", ", plan.BreakingNames)}) are root mean squares on a torus of 2^{Doublings} vertices a side: the modulus of the spontaneous value where there is order.";
     }
 
     private BlockReading Read(
@@ -54,7 +54,7 @@ internal sealed class BlockMeasurer(Backend backend) : IMeasurer
     {
         int steps = inputs.TorusLength is { } length ? Steps(length, network.Network.SitesPerVertex / system.SitesPerCell) : 2 * Doublings;
         int[] orders = [.. names.Select(name => breaks ? Math.Max(2, Order(name, requests)) : Order(name, requests))];
-        ImmutableArray<int> sequence = ChiSequence.Below(inputs.BondDimension);
+        int[] sequence = [Math.Max(1, 2 * inputs.BondDimension / 3), inputs.BondDimension];
         var flows = new List<IReadOnlyList<MomentRecord>>();
         foreach (int chi in sequence)
         {
@@ -62,7 +62,7 @@ internal sealed class BlockMeasurer(Backend backend) : IMeasurer
             flows.Add(network.Network.IsReal ? Flow<double>(network, orders, chi, steps, stop) : Flow<Complex>(network, orders, chi, steps, stop));
         }
 
-        return new BlockReading(names, sequence, flows, inputs.TorusLength is not null, breaks);
+        return new BlockReading(names, flows, inputs.TorusLength is not null, breaks);
     }
 
     private IReadOnlyList<MomentRecord> Flow<T>(ModelNetwork network, int[] orders, int chi, int steps, CancellationToken stop)
