@@ -198,6 +198,8 @@ public sealed class OutputTests : IDisposable
     [InlineData("resume")]
     [InlineData("converge")]
     [InlineData("models")]
+    [InlineData("measure")]
+    [InlineData("sweep")]
     public void Help_is_there(string command)
     {
         ProcessOutcome help = Run([.. command.Split(' ', StringSplitOptions.RemoveEmptyEntries), "--help"]).Expect(0);

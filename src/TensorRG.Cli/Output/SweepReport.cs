@@ -33,8 +33,8 @@ internal sealed record SweepReport(SweepInputs Inputs, ImmutableArray<PointResul
         IEnumerable<string> given = parameters.Values.Zip(parameters.Model.Parameters)
             .Where(p => !Inputs.Axes.Any(a => a.Parameters.Contains(p.First.Key)) && !FollowsOthers(p.First.Key))
             .Select(static p => FormattableString.Invariant($"{p.Second.Symbol} = {p.First.Value}"));
-        string[] following = parameters.Values.Where(p => FollowsOthers(p.Key)).Select(static _ => "T critical where known").ToArray();
-        return string.Join(", ", following.Concat(given));
+        string rule = Inputs.Temperature == TemperatureRule.Critical ? "T critical" : "T critical where known";
+        return string.Join(", ", parameters.Values.Where(p => FollowsOthers(p.Key)).Select(_ => rule).Concat(given));
     }
 
     /// <summary>Remarks that some point carries, each once.</summary>
