@@ -30,9 +30,12 @@ public sealed class BoundarySolver<T>(TensorAlgebra<T> algebra, BoundarySettings
     public BoundaryState<T> Solve(Tensor<T> site, int bondDimension, BoundaryState<T>? start = null, CancellationToken stop = default)
     {
         ArgumentOutOfRangeException.ThrowIfLessThan(bondDimension, 1);
-        Check(site, start);
+        Check(site);
         double scale = TensorAlgebra<T>.LargestMagnitude(site);
-        using Tensor<T> row = TensorAlgebra<T>.Scale(site, Scalar.FromReal<T>(1 / scale)), turned = UpsideDown.Of(row);
+        using Tensor<T> regraded = FiniteGrading.Of(site);
+        using Tensor<T> row = TensorAlgebra<T>.Scale(regraded, Scalar.FromReal<T>(1 / scale)), turned = UpsideDown.Of(row);
+        if (start is not null && !start.Upper.AC.Legs[1].Equals(row.Legs[2]))
+            throw new ArgumentException($"The start was found for vertical legs {start.Upper.AC.Legs[1]}, the network has {row.Legs[2]}.", nameof(start));
         FixedPoint<T> upper = _search.Run(row, bondDimension, start?.Upper, stop);
         FixedPoint<T> lower = UpsideDown.Same(row, turned)
             ? upper with { Iterations = 0 }
@@ -45,15 +48,16 @@ public sealed class BoundarySolver<T>(TensorAlgebra<T> algebra, BoundarySettings
         UniformState<T> under = lower.State.Turned();
         var strip = new Strip<T>(algebra, upper.State, under, settings.Seed);
         (Tensor<T> left, Tensor<T> right, Complex factor) = strip.WithRow(row);
+        Complex overlap = strip.WithoutRow();
         return new BoundaryState<T>
         {
             Upper = upper.State,
             Lower = under,
             FL = left,
             FR = right,
-            LogEigenvalue = Complex.Log(factor / strip.WithoutRow()) + Math.Log(scale),
+            LogEigenvalue = Complex.Log(factor / overlap) + Math.Log(scale),
             Residual = Math.Max(upper.Residual, lower.Residual),
-            IsConverged = upper.IsConverged && lower.IsConverged,
+            IsConverged = upper.IsConverged && lower.IsConverged && strip.IsUnique,
             Iterations = upper.Iterations + lower.Iterations,
             Schmidt = upper.State.SchmidtValues(algebra),
         };
@@ -74,10 +78,11 @@ public sealed class BoundarySolver<T>(TensorAlgebra<T> algebra, BoundarySettings
         if (!impurity.Legs.SequenceEqual(site.Legs) || impurity.Flux != Charge.Zero)
             throw new ArgumentException($"The impurity {impurity} does not have the legs of the site {site}.", nameof(impurity));
         var strip = new Strip<T>(algebra, state.Upper, state.Lower, settings.Seed);
-        return strip.Vertex(state.FL, impurity, state.FR) / strip.Vertex(state.FL, site, state.FR);
+        using Tensor<T> below = FiniteGrading.Of(site), above = FiniteGrading.Of(impurity);
+        return strip.Vertex(state.FL, above, state.FR) / strip.Vertex(state.FL, below, state.FR);
     }
 
-    private static void Check(Tensor<T> site, BoundaryState<T>? start)
+    private static void Check(Tensor<T> site)
     {
         ArgumentNullException.ThrowIfNull(site);
         bool uniform = site.Rank == 4 && site.Flux == Charge.Zero
@@ -85,7 +90,5 @@ public sealed class BoundarySolver<T>(TensorAlgebra<T> algebra, BoundarySettings
             && site.Legs[0].Matches(site.Legs[2]) && site.Legs[1].Matches(site.Legs[3]);
         if (!uniform)
             throw new ArgumentException($"A uniform network has one tensor [u in; l in; d out; r out] without flux, d matching u and r matching l, not {site}.", nameof(site));
-        if (start is not null && !start.Upper.AC.Legs[1].Equals(site.Legs[2]))
-            throw new ArgumentException($"The start was found for vertical legs {start.Upper.AC.Legs[1]}, the network has {site.Legs[2]}.", nameof(start));
     }
 }

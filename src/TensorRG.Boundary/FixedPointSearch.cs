@@ -15,7 +15,7 @@ internal sealed class FixedPointSearch<T>(TensorAlgebra<T> algebra, BoundarySett
     private const double GrowthTolerance = 1e-6;
     private const int GrowthIterations = 200;
     private const int TrialIterations = 15;
-    private const int Patience = 60;
+    private const int Patience = 100;
     private const double SmallestSchmidt = 1e-16;
 
     private readonly SubspaceExpansion<T> _expansion = new(algebra);
