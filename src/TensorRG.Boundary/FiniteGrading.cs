@@ -25,7 +25,8 @@ internal static class FiniteGrading
             {
                 ReadOnlySpan<int> p = at.Span;
                 return tensor.At(positions[0][p[0]], positions[1][p[1]], positions[2][p[2]], positions[3][p[3]]);
-            });
+            },
+            Pick(tensor.Flux, kept));
     }
 
     private static Leg Regraded(AbelianGroup group, Leg leg, int[] kept)

@@ -14,6 +14,7 @@ internal sealed class Strip<T>(TensorAlgebra<T> algebra, UniformState<T> upper, 
 {
     private const double Tolerance = 2e-15;
     private const double Agreement = 1e-7;
+    private const double RatioTolerance = 1e-10;
 
     private readonly Channel<T> _channel = new(algebra);
     private readonly Arnoldi<T> _solver = new(dimension: 24, restarts: 200);
@@ -51,6 +52,55 @@ internal sealed class Strip<T>(TensorAlgebra<T> algebra, UniformState<T> upper, 
     {
         using Tensor<T> center = _channel.Center(left, upper.AC, vertex, right);
         return Scalar.ToComplex(Close(center, lower.AC));
+    }
+
+    /// <summary>The strip with one vertex at a place and another at distances 1, 2, ..., over the strip of the row alone.</summary>
+    public Complex[] Pair(Tensor<T> left, Tensor<T> right, Tensor<T> row, Tensor<T> first, Tensor<T> second, int count)
+    {
+        T factor = T.One / Close(_channel.Center(left, upper.AC, row, right), lower.AC);
+        Tensor<T> state = Step(left, upper.AC, first, lower.AC);
+        var result = new Complex[count];
+        for (int i = 0; i < count; i++)
+        {
+            using Tensor<T> end = Step(state, upper.AR, second, lower.AR);
+            using Tensor<T> number = algebra.Contract(end, [2, 1, 0], right, [0, 1, 2]);
+            result[i] = Scalar.ToComplex(number.Elements[0]);
+            using Tensor<T> old = state;
+            state = Step(old, upper.AR, row, lower.AR);
+        }
+
+        return result;
+
+        Tensor<T> Step(Tensor<T> from, Tensor<T> above, Tensor<T> vertex, Tensor<T> below)
+        {
+            Tensor<T> next = _channel.Left(from, above, vertex, below);
+            VectorSpace.Scale(next, factor);
+            return next;
+        }
+    }
+
+    /// <summary>
+    /// The largest eigenvalue of the strip that carries a charge, over the dominant one; for charge zero the second. Null where no state carries the charge.
+    /// </summary>
+    public Complex? Ratio(Tensor<T> left, Tensor<T> right, Tensor<T> row, Charge charge)
+    {
+        using Tensor<T> start = VectorSpace.Random<T>(left.Legs, new RandomSequence(seed, 7), charge);
+        if (start.StoredCount == 0)
+            return null;
+        using Tensor<T> above = algebra.Contract(upper.C, [1], right, [1]);
+        using Tensor<T> dual = algebra.Contract(above, [2], lower.C, [1]);
+        Ritz<T> ritz = _solver.Dominant(v => Deflated(_channel.Left(v, upper.AL, row, lower.AL)), Deflated(start), RatioTolerance);
+        return ritz.Value / Vertex(left, row, right);
+
+        // v - FL (v, C C FR): what is left beside the dominant vector.
+        Tensor<T> Deflated(Tensor<T> v)
+        {
+            if (charge != Charge.Zero)
+                return v;
+            using Tensor<T> overlap = algebra.Contract(v, [1, 2, 0], dual, [0, 1, 2]);
+            VectorSpace.AddTo(v, left, -overlap.Elements[0]);
+            return v;
+        }
     }
 
     /// <summary>The factor, after a look whether the eigenvalues from both sides are the same.</summary>
