@@ -32,6 +32,8 @@ public sealed class BoundarySolver<T>(TensorAlgebra<T> algebra, BoundarySettings
         ArgumentOutOfRangeException.ThrowIfLessThan(bondDimension, 1);
         Check(site);
         double scale = TensorAlgebra<T>.LargestMagnitude(site);
+        if (!(scale > 0) || !double.IsFinite(scale))
+            throw new Tensors.Kernels.DecompositionException("The tensor of the network is zero or holds NaN or infinity.");
         using Tensor<T> regraded = FiniteGrading.Of(site);
         using Tensor<T> row = TensorAlgebra<T>.Scale(regraded, Scalar.FromReal<T>(1 / scale)), turned = UpsideDown.Of(row);
         if (start is not null && !start.Upper.AC.Legs[1].Equals(row.Legs[2]))
@@ -41,6 +43,23 @@ public sealed class BoundarySolver<T>(TensorAlgebra<T> algebra, BoundarySettings
             ? upper with { Iterations = 0 }
             : _search.Run(turned, bondDimension, start?.Lower.Turned(), stop);
         return Assemble(row, scale, upper, lower);
+    }
+
+    /// <summary>The surroundings of a row at the bond dimension of the settings, from a small random state.</summary>
+    /// <inheritdoc cref="Solve(Tensor{T}, int, BoundaryState{T}?, CancellationToken)"/>
+    public BoundaryState<T> Solve(Tensor<T> site, CancellationToken stop = default) => Solve(site, settings.BondDimension, null, stop);
+
+    /// <summary>The surroundings of a row at one bond dimension after another, each going on from the last. Computed as they are asked for.</summary>
+    /// <param name="site">A[u, l, d, r], as for one bond dimension.</param>
+    /// <param name="bondDimensions">The bond dimensions, ascending to be of use.</param>
+    /// <param name="start">A result to go on from, or null.</param>
+    /// <param name="stop">Ends the search.</param>
+    public IEnumerable<BoundaryState<T>> Sequence(Tensor<T> site, IEnumerable<int> bondDimensions, BoundaryState<T>? start = null, CancellationToken stop = default)
+    {
+        ArgumentNullException.ThrowIfNull(bondDimensions);
+        BoundaryState<T>? last = start;
+        foreach (int bondDimension in bondDimensions)
+            yield return last = Solve(site, bondDimension, last, stop);
     }
 
     private BoundaryState<T> Assemble(Tensor<T> row, double scale, FixedPoint<T> upper, FixedPoint<T> lower)

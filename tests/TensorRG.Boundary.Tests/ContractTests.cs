@@ -14,6 +14,38 @@ public sealed class ContractTests
         Check(Networks.Solver<double>(1e-11).Solve(site, 10));
     }
 
+    // Far from criticality most of the states asked for have a weight below round-off.
+    [Fact]
+    public void States_of_no_weight_leave_isometries_behind()
+    {
+        (Tensor<double> site, _, _) = Networks.Of("ising", true, ("T", 1.3));
+        BoundaryState<double> state = Networks.Solver<double>(1e-12).Solve(site, 48);
+        Check(state);
+        Assert.True(state.BondDimension < 48);
+    }
+
+    [Fact]
+    public void A_sequence_goes_on_from_one_bond_dimension_to_the_next()
+    {
+        (Tensor<double> site, double prefactor, double exact) = Networks.Of("ising", true, ("T", 2.6));
+        double last = double.PositiveInfinity;
+        foreach (BoundaryState<double> state in Networks.Solver<double>(1e-9).Sequence(site, [2, 4, 8]))
+        {
+            double deviation = exact - (state.LogEigenvalue.Real + prefactor);
+            Assert.True(deviation > 0 && deviation < last / 10, $"{deviation:e2}");
+            last = deviation;
+        }
+    }
+
+    [Theory]
+    [InlineData(0)]
+    [InlineData(double.NaN)]
+    public void Nothing_to_decompose_is_refused(double value)
+    {
+        using Tensor<double> site = Networks.FromElements(2, (_, _, _, _) => value);
+        Assert.Throws<Tensors.Kernels.DecompositionException>(() => Networks.Solver<double>(1e-8).Solve(site, 4));
+    }
+
     [Fact]
     public void Asymmetric_states_are_in_mixed_canonical_form()
     {
