@@ -5,7 +5,8 @@ namespace TensorRG.Boundary;
 
 /// <summary>
 /// The grading without its U(1) factors. The dominant vector may carry any density of such a charge, which a uniform state
-/// with finitely many charges on its bond cannot follow; the ungraded state finds the density by itself.
+/// with finitely many charges on its bond cannot follow; the ungraded state finds the density by itself. (Modulo 2 was tried: at half filling the state alternates along the row, and
+/// keeping both translates takes twice the states for the same value.)
 /// </summary>
 internal static class FiniteGrading
 {

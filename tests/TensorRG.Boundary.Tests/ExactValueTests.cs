@@ -26,12 +26,15 @@ public sealed class ExactValueTests
         Assert.True(deviation <= bound && deviation > bound / 2, $"{deviation:e2}");
     }
 
-    [Fact]
-    public void Potts_at_its_transition()
+    // Exact: R. J. Baxter, J. Phys. C 6, L445 (1973). Symmetric corner matrices: 1.2e-6 (own script, no source). At a transition an
+    // ungraded state of few states gives up the symmetry and comes closer with as many states: measured 2.3e-7.
+    [Theory]
+    [InlineData(true, 1.2e-6)]
+    [InlineData(false, 2.4e-7)]
+    public void Potts_at_its_transition(bool graded, double bound)
     {
-        // Exact: R. J. Baxter, J. Phys. C 6, L445 (1973).
-        double deviation = Deviation("potts", true, 24, 1e-8, ("q", 3));
-        Assert.True(deviation <= 1.2e-6, $"{deviation:e2}");
+        double deviation = Deviation("potts", graded, 24, 1e-7, ("q", 3));
+        Assert.True(deviation <= bound && deviation > bound / 2, $"{deviation:e2}");
     }
 
     [Fact]
