@@ -13,6 +13,9 @@ namespace TensorRG.Boundary;
 internal sealed class Arnoldi<T>(int dimension, int restarts)
     where T : unmanaged, INumberBase<T>
 {
+    /// <summary>A new direction below this fraction of its vector is round-off: the space is closed under the map.</summary>
+    private const double RoundOff = 1e-15;
+
     /// <summary>The dominant eigenpair, to a relative residual or until the rounds are used up.</summary>
     public Ritz<T> Dominant(Func<Tensor<T>, Tensor<T>> apply, Tensor<T> start, double tolerance)
     {
@@ -39,9 +42,10 @@ internal sealed class Arnoldi<T>(int dimension, int restarts)
             for (int n = 1; ; n++)
             {
                 Tensor<T> next = apply(basis[n - 1]);
-                double rest = Orthogonalise(next, basis, h, n - 1);
+                double before = VectorSpace.Norm(next), rest = Orthogonalise(next, basis, h, n - 1);
                 basis.Add(next);
-                if (!IsChecked(n))
+                bool isClosed = rest <= RoundOff * before;
+                if (!isClosed && !IsChecked(n))
                 {
                     VectorSpace.Scale(next, Scalar.FromReal<T>(1 / rest));
                     continue;
@@ -49,7 +53,7 @@ internal sealed class Arnoldi<T>(int dimension, int restarts)
 
                 (Complex value, Complex[] y) = SmallEigen.Dominant(h, n, typeof(T) == typeof(double));
                 double residual = value == Complex.Zero ? double.PositiveInfinity : rest * y[^1].Magnitude / value.Magnitude;
-                if (residual <= tolerance || n == dimension || rest <= 1e-16 * value.Magnitude)
+                if (residual <= tolerance || n == dimension || isClosed)
                     return new Ritz<T>(value, Combine(basis, y), residual, n);
                 VectorSpace.Scale(next, Scalar.FromReal<T>(1 / rest));
             }

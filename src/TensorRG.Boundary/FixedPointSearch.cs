@@ -15,7 +15,7 @@ internal sealed class FixedPointSearch<T>(TensorAlgebra<T> algebra, BoundarySett
     private const double GrowthTolerance = 1e-6;
     private const int GrowthIterations = 200;
     private const int TrialIterations = 15;
-    private const int Patience = 60;
+    private const int Patience = 100;
     private const double SmallestSchmidt = 1e-16;
 
     private readonly SubspaceExpansion<T> _expansion = new(algebra);
@@ -31,7 +31,7 @@ internal sealed class FixedPointSearch<T>(TensorAlgebra<T> algebra, BoundarySett
     public FixedPoint<T> Run(Tensor<T> row, int bondDimension, UniformState<T>? start, CancellationToken stop)
     {
         UniformState<T> first = start ?? StartingState.Create(algebra, row.Legs[2], settings.Seed);
-        var problem = new RowProblem<T>(algebra, row, settings.Seed) { State = Reduced(first, bondDimension) };
+        var problem = new RowProblem<T>(algebra, row, settings.Seed) { State = Reduced(first, Cut(bondDimension)) };
         int iterations = 0;
         while (problem.State.BondDimension < bondDimension)
         {
@@ -42,17 +42,27 @@ internal sealed class FixedPointSearch<T>(TensorAlgebra<T> algebra, BoundarySett
             if (problem.State.BondDimension <= bondDimension)
                 continue;
             iterations += Converge(problem, GrowthTolerance, TrialIterations, stop);
-            problem.Replace(Reduced(problem.State, bondDimension));
+            problem.Replace(Reduced(problem.State, Cut(bondDimension)));
             break;
         }
 
         iterations += Converge(problem, settings.Tolerance, settings.MaxIterations, stop);
-        return new FixedPoint<T>(Reduced(problem.State, bondDimension), problem.Residual, iterations, problem.Residual <= settings.Tolerance);
+        UniformState<T> reduced = Reduced(problem.State, Cut(bondDimension));
+        if (reduced.BondDimension < problem.State.BondDimension)
+        {
+            // AL is an isometry no longer: its columns may reach into states of much less weight than their own.
+            problem.Replace(reduced);
+            iterations += Converge(problem, settings.Tolerance, settings.MaxIterations, stop);
+        }
+
+        return new FixedPoint<T>(Reduced(problem.State, UnitaryFactor.KeepAll), problem.Residual, iterations, problem.Residual <= settings.Tolerance);
     }
+
+    private static CutRule Cut(int bondDimension) => new(bondDimension, RelativeFloor: SmallestSchmidt);
 
     private void Reduce(RowProblem<T> problem, int bondDimension)
     {
-        problem.Replace(Reduced(problem.State, bondDimension));
+        problem.Replace(Reduced(problem.State, Cut(bondDimension)));
         problem.Iterate();
     }
 
@@ -86,10 +96,9 @@ internal sealed class FixedPointSearch<T>(TensorAlgebra<T> algebra, BoundarySett
         return most;
     }
 
-    /// <summary>The state in the basis of its Schmidt vectors, without those of no weight, the heaviest with charge zero.</summary>
-    private UniformState<T> Reduced(UniformState<T> state, int bondDimension)
+    /// <summary>The state in the basis of those of its Schmidt vectors that a rule keeps, the heaviest with charge zero.</summary>
+    private UniformState<T> Reduced(UniformState<T> state, CutRule rule)
     {
-        var rule = new CutRule(bondDimension, RelativeFloor: SmallestSchmidt);
         TruncatedSvd<T> svd = DenseSvd.Compute(algebra.Kernels, state.C, [0], [1], rule);
         using Tensor<T> u = svd.U, v = svd.V;
         UniformState<T> turned = BondShape.Turn(algebra, state, u, v);

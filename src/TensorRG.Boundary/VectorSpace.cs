@@ -56,10 +56,10 @@ internal static class VectorSpace
     }
 
     /// <summary>A vector of random elements.</summary>
-    public static Tensor<T> Random<T>(IEnumerable<Leg> legs, RandomSequence random)
+    public static Tensor<T> Random<T>(IEnumerable<Leg> legs, RandomSequence random, Charge flux = default)
         where T : unmanaged, INumberBase<T>
     {
-        Tensor<T> result = Tensor<T>.Zeros(legs);
+        Tensor<T> result = Tensor<T>.Zeros(legs, flux);
         foreach (ref T element in result.Elements)
             element = Scalar.FromReal<T>(random.NextUnit());
         return result;
