@@ -26,43 +26,38 @@ internal sealed class BlockMeasurer(Backend backend) : IMeasurer
         ArgumentNullException.ThrowIfNull(inputs);
         ImmutableArray<QuantityRequest> requests = QuantityCatalogue.Read(inputs);
         LatticeSystem system = QuantityCatalogue.SystemOf(inputs.Parameters);
-        var plan = BranchPlan.Of(system, inputs, requests);
-        BlockReading neutral = Read(plan.Symmetric, plan.NeutralNames, false, inputs, system, requests, progress, stop);
-        BlockReading? breaking = plan.Broken is { } network ? Read(network, plan.BreakingNames, true, inputs, system, requests, progress, stop) : null;
-        ImmutableArray<Measured> values = [.. requests.Select(r => Assemble(r, inputs, r.Observable is { } o && plan.BreakingNames.Contains(o.Name) ? breaking! : neutral))];
-        return new Measurement(values, [.. Remarks(plan, inputs, breaking)]);
+        var plan = new BranchPlan(system, inputs, requests);
+        BlockReading symmetric = Read(plan.Symmetric);
+        Branch[] branches = [.. new[] { plan.Uniform, plan.Alternating }.OfType<Branch>()];
+        BlockReading[] ordered = [.. branches.Select(Read)];
+        ImmutableArray<Measured> values = [.. requests.Select(r => Assemble(r, inputs, ordered.FirstOrDefault(o => o.Has(r)) ?? symmetric))];
+        return new Measurement(values, [.. plan.Remarks, .. Remarks(inputs, branches)]);
+
+        BlockReading Read(Branch branch) => this.Read(branch, inputs, system, requests, progress, stop);
     }
 
-    private static IEnumerable<string> Remarks(BranchPlan plan, MeasurementInputs inputs, BlockReading? breaking)
+    private static IEnumerable<string> Remarks(MeasurementInputs inputs, Branch[] ordered)
     {
-        yield return plan.Symmetric.Choice;
         if (inputs.TorusLength is { } length)
             yield return FormattableString.Invariant($"Torus of {length} x {length} cells.");
-        else if (breaking is not null)
-            yield return $"Observables that break the symmetry ({string.Join(", ", plan.BreakingNames)}) are root mean squares on a torus of 2^{Doublings} vertices a side: the modulus of the spontaneous value where there is order.";
+        else if (ordered.Length > 0)
+            yield return $"Observables that break the symmetry ({string.Join(", ", ordered.SelectMany(static b => b.Names))}) are root mean squares on a torus of 2^{Doublings} vertices a side: the modulus of the spontaneous value where there is order.";
     }
 
     private BlockReading Read(
-        ModelNetwork network,
-        ImmutableArray<string> names,
-        bool breaks,
-        MeasurementInputs inputs,
-        LatticeSystem system,
-        ImmutableArray<QuantityRequest> requests,
-        IProgress<string>? progress,
-        CancellationToken stop)
+        Branch branch, MeasurementInputs inputs, LatticeSystem system, ImmutableArray<QuantityRequest> requests, IProgress<string>? progress, CancellationToken stop)
     {
-        int steps = inputs.TorusLength is { } length ? Steps(length, network.Network.SitesPerVertex / system.SitesPerCell) : 2 * Doublings;
-        int[] orders = [.. names.Select(name => breaks ? Math.Max(2, Order(name, requests)) : Order(name, requests))];
+        int steps = inputs.TorusLength is { } length ? Steps(length, branch.Model.Network.SitesPerVertex / system.SitesPerCell) : 2 * Doublings;
+        int[] orders = [.. branch.Names.Select(name => Math.Max(branch.IsOrdered ? 2 : 1, Order(name, requests)))];
         int[] sequence = [Math.Max(1, 2 * inputs.BondDimension / 3), inputs.BondDimension];
         var flows = new List<IReadOnlyList<MomentRecord>>();
         foreach (int chi in sequence)
         {
             progress?.Report(FormattableString.Invariant($"moments, chi = {chi}"));
-            flows.Add(network.Network.IsReal ? Flow<double>(network, orders, chi, steps, stop) : Flow<Complex>(network, orders, chi, steps, stop));
+            flows.Add(branch.IsReal ? Flow<double>(branch.Model, orders, chi, steps, stop) : Flow<Complex>(branch.Model, orders, chi, steps, stop));
         }
 
-        return new BlockReading(names, flows, inputs.TorusLength is not null, breaks);
+        return new BlockReading(branch.Names, flows, inputs.TorusLength is not null, branch.IsOrdered);
     }
 
     private IReadOnlyList<MomentRecord> Flow<T>(ModelNetwork network, int[] orders, int chi, int steps, CancellationToken stop)

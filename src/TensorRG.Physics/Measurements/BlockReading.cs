@@ -29,6 +29,10 @@ internal sealed class BlockReading
     /// <summary>True for the torus of the last step; false for the infinite lattice.</summary>
     public bool IsTorus { get; }
 
+    /// <summary>Whether a requested quantity is read from here.</summary>
+    /// <param name="request">What was asked for.</param>
+    public bool Has(QuantityRequest request) => request.Observable is { } o && _names.Contains(o.Name);
+
     private int LastStep => _flows[^1].Count - 1;
 
     /// <summary>A requested quantity with its bar, and its imaginary part.</summary>

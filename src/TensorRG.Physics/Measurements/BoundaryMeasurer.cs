@@ -1,6 +1,5 @@
 using System.Collections.Immutable;
 using System.Numerics;
-using TensorRG.Boundary;
 using TensorRG.Models;
 using TensorRG.Models.Lattices;
 using TensorRG.Tensors.Kernels;
@@ -20,40 +19,38 @@ internal sealed class BoundaryMeasurer(Backend backend) : IMeasurer
         ArgumentNullException.ThrowIfNull(inputs);
         ImmutableArray<QuantityRequest> requests = QuantityCatalogue.Read(inputs);
         LatticeSystem system = QuantityCatalogue.SystemOf(inputs.Parameters);
-        var plan = BranchPlan.Of(system, inputs, requests);
-        var remarks = new List<string> { plan.Symmetric.Choice, plan.SymmetryRemark };
-        BranchReading symmetric = Read(plan.Symmetric, inputs, plan, plan.NeutralNames, null, progress, stop);
-        BranchReading? broken = plan.Broken is { } network
-            ? Read(network, inputs, plan, plan.BreakingNames, 0, progress, stop)
-            : null;
-        if (broken is not null)
-            remarks.Add(broken.OrderRemark(symmetric, plan.OrderName));
-        ImmutableArray<Measured> values = [.. requests.Select(r => Assemble(r, inputs.Parameters, r.Observable is { } o && plan.BreakingNames.Contains(o.Name) ? broken! : symmetric))];
-        return new Measurement(values, [.. remarks.Where(static r => r.Length > 0)]);
+        var plan = new BranchPlan(system, inputs, requests);
+        BranchReading symmetric = Read(plan.Symmetric);
+        BranchReading[] ordered = [.. Ordered(plan)];
+        ImmutableArray<Measured> values = [.. requests.Select(r => Assemble(r, inputs.Parameters, ordered.FirstOrDefault(o => o.Has(r)) ?? symmetric))];
+        return new Measurement(values, [.. plan.Remarks, .. ordered.Select(o => o.OrderRemark(symmetric))]);
+
+        BranchReading Read(Branch branch)
+        {
+            progress?.Report($"boundary fixed points, {(branch.IsOrdered ? "ordered" : "symmetric")} state");
+            return new BranchReading(branch.Names, branch.IsOrdered, branch.IsReal ? Run<double>(branch, inputs, stop) : Run<Complex>(branch, inputs, stop));
+        }
+
+        IEnumerable<BranchReading> Ordered(BranchPlan p)
+        {
+            if (p.Uniform is { } uniform)
+                yield return Read(uniform) is { Alternates: false } plain ? plain : Read(p.UniformInBlocks());
+            if (p.Alternating is { } alternating)
+                yield return Read(alternating);
+        }
     }
 
-    private BranchReading Read(
-        ModelNetwork network, MeasurementInputs inputs, BranchPlan plan, ImmutableArray<string> names, int? orderBy, IProgress<string>? progress, CancellationToken stop)
-    {
-        progress?.Report($"boundary fixed points, {(orderBy is null ? "symmetric" : "ordered")} state");
-        int[] variances = [.. names.Select((name, i) => (name, i)).Where(x => plan.VarianceNames.Contains(x.name)).Select(static x => x.i)];
-        return new BranchReading(names, network.Network.IsReal
-            ? Run<double>(network, inputs, orderBy, variances, stop)
-            : Run<Complex>(network, inputs, orderBy, variances, stop));
-    }
-
-    private IReadOnlyList<BranchPoint> Run<T>(ModelNetwork network, MeasurementInputs inputs, int? orderBy, int[] variances, CancellationToken stop)
+    private IReadOnlyList<BranchPoint> Run<T>(Branch branch, MeasurementInputs inputs, CancellationToken stop)
         where T : unmanaged, INumberBase<T>
     {
-        var settings = new BoundarySettings { BondDimension = inputs.BondDimension, Seed = inputs.Seed };
-        using var branch = new BoundaryBranch<T>(backend, network, settings);
-        return branch.Run(ChiSequence.Below(inputs.BondDimension), orderBy, variances, stop);
+        using var states = new BoundaryBranch<T>(backend, branch, inputs.Seed);
+        return states.Run(ChiSequence.Below(inputs.BondDimension), stop);
     }
 
     private static Measured Assemble(QuantityRequest request, ParameterSet parameters, BranchReading reading)
     {
         (Estimate value, double imaginary) = reading.Value(request);
-        string remark = reading.IsConverged ? "" : "the boundary state did not converge: raise --bond-dimension, or use --method blocks";
-        return new Measured(request.Name, request.Meaning, request.Unit, value, imaginary, reading.IsConverged, remark, ExactQuantities.Of(request, parameters));
+        string doubt = BranchReading.Doubt(value);
+        return new Measured(request.Name, request.Meaning, request.Unit, value, imaginary, doubt.Length == 0, doubt, ExactQuantities.Of(request, parameters));
     }
 }

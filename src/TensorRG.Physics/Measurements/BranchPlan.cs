@@ -1,71 +1,58 @@
 using System.Collections.Immutable;
-using TensorRG.Models;
 using TensorRG.Models.Lattices;
 
 namespace TensorRG.Physics.Measurements;
 
-/// <summary>Which networks a measurement needs and which observable is read from which.</summary>
-/// <param name="Symmetric">The graded network with the neutral observables.</param>
-/// <param name="Broken">The same without charges and with the observables that break the symmetry, the order parameter first; null if none is asked for.</param>
-/// <param name="NeutralNames">Observables of the symmetric network.</param>
-/// <param name="BreakingNames">Observables of the broken network.</param>
-/// <param name="VarianceNames">Observables whose variance is asked for.</param>
-internal sealed record BranchPlan(
-    ModelNetwork Symmetric,
-    ModelNetwork? Broken,
-    ImmutableArray<string> NeutralNames,
-    ImmutableArray<string> BreakingNames,
-    ImmutableHashSet<string> VarianceNames)
+/// <summary>
+/// The networks of a measurement: the symmetric one for neutral quantities, one without charges for observables that break the symmetry, and one of
+/// blocks of 2 x 2 cells for those that alternate from cell to cell.
+/// </summary>
+internal sealed class BranchPlan
 {
-    /// <summary>The observable whose field chooses the ordered state.</summary>
-    public string OrderName => BreakingNames[0];
-
-    /// <summary>The symmetry in use, for people.</summary>
-    public string SymmetryRemark => Symmetric.Network.GroupOrders.IsEmpty ? "" : $"Symmetry in use: {Symmetric.Symmetry}.";
+    private readonly LatticeSystem _system;
+    private readonly MeasurementInputs _inputs;
+    private readonly ImmutableArray<QuantityRequest> _requests;
 
     /// <summary>Sorts the observables of a request by what they do to the symmetry.</summary>
     /// <param name="system">The model.</param>
     /// <param name="inputs">The request.</param>
     /// <param name="requests">What was asked for.</param>
-    public static BranchPlan Of(LatticeSystem system, MeasurementInputs inputs, ImmutableArray<QuantityRequest> requests)
+    public BranchPlan(LatticeSystem system, MeasurementInputs inputs, ImmutableArray<QuantityRequest> requests)
     {
-        LocalObservable[] wanted = [.. requests.Select(static r => r.Observable).OfType<LocalObservable>().DistinctBy(static o => o.Name)];
-        ImmutableArray<string> uniform = [.. wanted.Where(static o => !o.IsStaggered).Select(static o => o.Name)];
-        ModelNetwork graded = Build(system, inputs, uniform, graded: true);
-        HashSet<string> breaking = [.. graded.Impurities.Where(i => Breaks(graded.Network, i)).Select(static i => i.Name), .. wanted.Where(static o => o.IsStaggered).Select(static o => o.Name)];
-        ImmutableArray<string> neutral = [.. uniform.Where(name => !breaking.Contains(name))];
-        ImmutableArray<string> broken = [.. wanted.Where(o => breaking.Contains(o.Name)).OrderByDescending(static o => o.IsOrderParameter).Select(static o => o.Name)];
-        return new BranchPlan(
-            neutral.Length == uniform.Length ? graded : Build(system, inputs, neutral, graded: true),
-            broken.IsEmpty ? null : Build(system, inputs, broken, graded: false),
-            neutral,
-            broken,
-            [.. requests.Where(static r => r.Kind == QuantityKind.Variance).Select(static r => r.Observable!.Name)]);
+        (_system, _inputs, _requests) = (system, inputs, requests);
+        LocalObservable[] wanted = [.. requests.Select(static r => r.Observable).OfType<LocalObservable>().DistinctBy(static o => o.Name).OrderByDescending(static o => o.IsOrderParameter)];
+        ImmutableArray<string> uniform = [.. wanted.Where(o => !Alternates(o)).Select(static o => o.Name)];
+        Branch all = Create(uniform, isOrdered: false);
+        HashSet<string> breaking = [.. all.Model.Impurities.Where(i => Branch.Breaks(all.Model.Network, i)).Select(static i => i.Name)];
+        Symmetric = breaking.Count == 0 ? all : Create([.. uniform.Where(n => !breaking.Contains(n))], isOrdered: false);
+        Uniform = breaking.Count == 0 ? null : Create([.. uniform.Where(breaking.Contains)], isOrdered: true);
+        ImmutableArray<string> alternating = [.. wanted.Where(Alternates).Select(static o => o.Name)];
+        Alternating = alternating.IsEmpty ? null : Create(alternating, isOrdered: true);
     }
 
-    private static ModelNetwork Build(LatticeSystem system, MeasurementInputs inputs, ImmutableArray<string> observables, bool graded)
-        => NetworkBuilder.Build(system, new NetworkOptions { Form = inputs.Form, Graded = graded, Observables = observables });
+    /// <summary>The graded network with the neutral observables.</summary>
+    public Branch Symmetric { get; }
 
-    private static bool Breaks(VertexNetwork network, Impurity impurity)
+    /// <summary>The network without charges and with the uniform observables that break the symmetry; null if none is asked for.</summary>
+    public Branch? Uniform { get; }
+
+    /// <summary>The network of blocks with the observables that alternate; null if none is asked for.</summary>
+    public Branch? Alternating { get; }
+
+    /// <summary>What a reader must know of the networks.</summary>
+    public IEnumerable<string> Remarks => Symmetric.Model.Network.GroupOrders.IsEmpty
+        ? [Symmetric.Model.Choice]
+        : [Symmetric.Model.Choice, $"Symmetry in use: {Symmetric.Model.Symmetry}."];
+
+    /// <summary>The network without charges in blocks of 2 x 2 cells, for a uniform order that the plain network cannot hold.</summary>
+    public Branch UniformInBlocks() => Create(Uniform!.Names, isOrdered: true, inBlocks: true);
+
+    private bool Alternates(LocalObservable observable) => observable.IsStaggered && _system.Lattice != LatticeKind.Honeycomb;
+
+    private Branch Create(ImmutableArray<string> names, bool isOrdered, bool inBlocks = false)
     {
-        if (network.GroupOrders.IsEmpty)
-            return false;
-        int v = network.VerticalBond.Length, h = network.HorizontalBond.Length;
-        for (int u = 0; u < v; u++)
-        {
-            for (int l = 0; l < h; l++)
-            {
-                for (int d = 0; d < v; d++)
-                {
-                    for (int r = 0; r < h; r++)
-                    {
-                        if (!network.ConservesCharge(u, l, d, r) && impurity.Element(1, u, l, d, r).Magnitude > 1e-13)
-                            return true;
-                    }
-                }
-            }
-        }
-
-        return false;
+        var options = new NetworkOptions { Form = _inputs.Form, Graded = !isOrdered, Observables = names, InBlocks = inBlocks };
+        int[] variances = [.. Enumerable.Range(0, names.Length).Where(i => _requests.Any(r => r.Kind == QuantityKind.Variance && r.Observable!.Name == names[i]))];
+        return new Branch(NetworkBuilder.Build(_system, options), names, isOrdered, [.. variances]);
     }
 }

@@ -28,7 +28,7 @@ public static partial class QuantityCatalogue
             names.Add("entropy");
         if (names.Contains(Energy))
             names.Add("specific-heat");
-        names.AddRange(Own(system).Where(static o => o.Name != Energy).Select(static o => o.Name));
+        names.AddRange(Own(system).Where(static o => o.Name != Energy && (!o.IsStaggered || o.IsOrderParameter)).Select(static o => o.Name));
         return names;
     }
 

@@ -7,6 +7,9 @@ internal static class Ridders
 {
     private const int Levels = 5;
 
+    /// <summary>Relative error that is good enough.</summary>
+    private const double GoodEnough = 1e-11;
+
     /// <summary>f'(0) and an estimate of its error.</summary>
     /// <param name="function">The function.</param>
     /// <param name="step">The first step; each further one is half the one before.</param>
@@ -27,7 +30,7 @@ internal static class Ridders
             }
 
             table.Add(row);
-            if (level > 1 && Math.Abs(row[^1] - table[^2][^1]) >= 2 * best.Error)
+            if (best.Error <= GoodEnough * Math.Abs(best.Value) || (level > 1 && Math.Abs(row[^1] - table[^2][^1]) >= 2 * best.Error))
                 break;
         }
 

@@ -5,6 +5,8 @@ namespace TensorRG.Models.Lattices.Forms;
 /// <summary>What is asked of a system, summed up by cluster: the weights, the weights that alternate in sign, and the observables.</summary>
 internal sealed class VertexTerms
 {
+    private readonly bool _inBlocks;
+
     /// <summary>Sums up the terms.</summary>
     /// <exception cref="ModelException">A name is unknown, a table has the wrong size, or a number is not allowed.</exception>
     public VertexTerms(LatticeSystem system, NetworkOptions options)
@@ -19,6 +21,7 @@ internal sealed class VertexTerms
         foreach ((string name, double strength) in options.Fields)
             AddField(Find(name), strength);
         Observables = [.. options.Observables.Select(Find)];
+        _inBlocks = options.InBlocks;
         IsReal = Weights.All.Concat(Alternating.All).All(static t => t.All(IsRealLog));
     }
 
@@ -38,7 +41,7 @@ internal sealed class VertexTerms
     public bool IsReal { get; }
 
     /// <summary>True if a vertex must stand for a block of 2 x 2 cells.</summary>
-    public bool NeedsBlock => System.Lattice != LatticeKind.Honeycomb && (Alternating.Clusters.Count > 0 || Observables.Any(static o => o.IsStaggered));
+    public bool NeedsBlock => System.Lattice != LatticeKind.Honeycomb && (_inBlocks || Alternating.Clusters.Count > 0 || Observables.Any(static o => o.IsStaggered));
 
     /// <summary>The signs of vertices that differ in weight.</summary>
     public int[] Signs => System.Lattice != LatticeKind.Honeycomb && Alternating.Clusters.Count > 0 ? [1, -1] : [1];
