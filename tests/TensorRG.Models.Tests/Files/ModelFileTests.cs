@@ -136,7 +136,7 @@ public class ModelFileTests
     {
         string expression = Samples.Vertices[..Samples.Vertices.IndexOf("table", StringComparison.Ordinal)]
             + "weight = \"if(up + left == down + right, if(up == left, a, if(up == down, b, c)), 0)\"";
-        SixVertexModel built = new();
+        Model built = ModelCatalogue.Find("six-vertex");
         KeyValuePair<string, double>[] given = [new("a", 0.7), new("b", 1.1), new("c", 1.9)];
         VertexNetwork network = built.Network(built.CreateParameters(given));
         foreach (string text in new[] { Samples.Vertices, expression })
