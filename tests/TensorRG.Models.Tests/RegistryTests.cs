@@ -19,7 +19,7 @@ public class RegistryTests
     private const int Seeds = 3;
 
     // Length, height, and the most states of a variable where they are a parameter.
-    private static readonly (int Lx, int Ly, int States)[] Tori = [(1, 1, 5), (2, 1, 4), (1, 2, 4), (2, 2, 3), (3, 2, 2), (2, 3, 2)];
+    private static readonly (int Lx, int Ly, int States)[] Tori = [(1, 1, 4), (2, 1, 3), (1, 2, 3), (2, 2, 3), (3, 2, 2), (2, 3, 2)];
 
     public static TheoryData<string, int> ModelsAndSeeds()
     {
@@ -99,6 +99,9 @@ public class RegistryTests
     private static void CompareTables(LiteratureModel literature, LatticeSystem system, int lx, int ly, string what)
     {
         var sum = new ConfigurationSum(literature);
+        Assert.Equal(sum.Scale > 0, IsAllowed(system, lx, ly));
+        if (sum.Scale == 0)
+            return;
         var oracle = new TorusOracle(system, new NetworkOptions { Observables = [.. system.Observables.Select(static o => o.Name)] }, lx, ly);
         double factor = Math.Exp(oracle.LogScale - sum.LogScale);
         Near(sum.Z, factor * oracle.Z, sum.Scale, $"Z of {what}, {lx} x {ly}");
@@ -112,6 +115,8 @@ public class RegistryTests
 
     private static void CompareNetworks(ParameterSet p, LatticeSystem system, NetworkForm form, int lx, int ly)
     {
+        if (!IsAllowed(system, lx, ly))
+            return;
         var oracle = new TorusOracle(system, new NetworkOptions(), lx, ly);
         foreach (bool graded in new[] { true, false })
         {
@@ -122,6 +127,9 @@ public class RegistryTests
             Assert.True(graded || network.GroupOrders.IsEmpty);
         }
     }
+
+    // One site of the square lattice on a torus of its own has no dimer.
+    private static bool IsAllowed(LatticeSystem system, int lx, int ly) => double.IsFinite(new TorusOracle(system, new NetworkOptions(), lx, ly).LogScale);
 
     // The forms that hold the terms of a system, from NetworkForm's own words.
     private static IEnumerable<NetworkForm> Forms(LatticeSystem system) => (system.OnEdges, system.Lattice) switch

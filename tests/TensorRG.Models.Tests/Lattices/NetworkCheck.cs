@@ -13,7 +13,7 @@ internal static class NetworkCheck
 
     private const double MaxSteps = 5e6;
 
-    /// <summary>Builds and compares ln Z, the phase, and the first four moments of the observables (two on more than four vertices) on a torus of lx x ly vertices.</summary>
+    /// <summary>Builds and compares ln Z, the phase, and moments of the observables on a torus of lx x ly vertices.</summary>
     public static ModelNetwork Torus(LatticeSystem system, NetworkOptions options, int lx, int ly)
     {
         ModelNetwork built = NetworkBuilder.Build(system, options);
@@ -31,7 +31,8 @@ internal static class NetworkCheck
         return Math.Pow(system.States, variables) <= MaxConfigurations && steps * lx * ly * lx * ly <= MaxSteps;
     }
 
-    public static void Compare(ModelNetwork built, LatticeSystem system, NetworkOptions options, int lx, int ly)
+    // powers is the highest power of an observable on two to four vertices: on one it is always four, on more at most two.
+    public static void Compare(ModelNetwork built, LatticeSystem system, NetworkOptions options, int lx, int ly, int powers = TorusOracle.HighestPower)
     {
         int block = Block(built, system);
         var oracle = new TorusOracle(system, options, block * lx, block * ly);
@@ -46,20 +47,19 @@ internal static class NetworkCheck
         for (int i = 0; i < options.Observables.Length; i++)
         {
             Impurity impurity = built.Impurities[i];
-            for (int n = 1; n <= HighestPower(lx * ly); n++)
-                Near(oracle.Moments[i][n], factor * torus.Moment(Powers(torus, impurity, n), n), Math.Max(oracle.Scale, oracle.MomentScales[i][n]), $"{impurity.Name}^{n}");
+            int highest = (lx * ly) switch { 1 => TorusOracle.HighestPower, <= 4 => powers, _ => Math.Min(2, powers) };
+            Complex[][] tensors = Powers(torus, impurity, highest);
+            for (int n = 1; n <= highest; n++)
+                Near(oracle.Moments[i][n], factor * torus.Moment(tensors, n), Math.Max(oracle.Scale, oracle.MomentScales[i][n]), $"{impurity.Name}^{n}");
         }
     }
 
-    /// <summary>The vertex with powers 0 to n of an observable put in.</summary>
-    public static Complex[][] Powers(ComplexTorus torus, Impurity impurity, int n)
+    // The vertex with powers 0 to n of an observable put in.
+    private static Complex[][] Powers(ComplexTorus torus, Impurity impurity, int n)
         => [torus.Vertex, .. Enumerable.Range(1, n).Select(k => torus.Dense((u, l, d, r) => impurity.Element(k, u, l, d, r)))];
 
-    /// <summary>Cells along the side of a vertex.</summary>
-    public static int Block(ModelNetwork built, LatticeSystem system) => built.Network.SitesPerVertex == 4 * system.SitesPerCell ? 2 : 1;
-
-    // Four powers on six vertices would be 200 contractions.
-    private static int HighestPower(int vertices) => vertices <= 4 ? TorusOracle.HighestPower : 2;
+    // Cells along the side of a vertex.
+    private static int Block(ModelNetwork built, LatticeSystem system) => built.Network.SitesPerVertex == 4 * system.SitesPerCell ? 2 : 1;
 
     private static void Near(Complex expected, Complex actual, double scale, string what)
         => Assert.True(Complex.Abs(expected - actual) <= Tolerance * scale, $"{what}: {expected} expected, {actual} found, scale {scale:R}, off by {Complex.Abs(expected - actual) / scale:E2}.");

@@ -36,9 +36,10 @@ internal sealed class ConfigurationSum
         double scale = 0;
         foreach (int[] s in model.Configurations())
         {
-            Complex log = model.LogWeight(s) + model.LogMeasure(s) - LogScale;
+            Complex log = model.LogWeight(s) + model.LogMeasure(s);
             if (double.IsNegativeInfinity(log.Real))
                 continue;
+            log -= LogScale;
             Complex term = Complex.FromPolarCoordinates(Math.Exp(log.Real), log.Imaginary) * value(s);
             real.Add(term.Real);
             imaginary.Add(term.Imaginary);
