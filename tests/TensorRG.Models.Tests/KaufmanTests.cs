@@ -1,4 +1,5 @@
 using TensorRG.Models.Solutions;
+using TensorRG.Models.Tests.Literature;
 
 namespace TensorRG.Models.Tests;
 

@@ -62,7 +62,7 @@ public class ParameterTests
     [Fact]
     public void Unknown_names_are_answered_with_the_known_ones()
     {
-        Fails(() => ModelCatalogue.Find("isingg"), "no model 'isingg'", "Did you mean 'ising'?", "ising, potts, clock, six-vertex");
+        Fails(() => ModelCatalogue.Find("isingg"), "no model 'isingg'", "Did you mean 'ising'?", "ashkin-teller, clock, dimers, dimers-honeycomb");
         Fails(() => Ising.CreateParameters([new("temprature", 1)]), "no parameter 'temprature'", "Did you mean 'temperature'?", "temperature, Jx, Jy, h, J");
         ModelException far = Assert.Throws<ModelException>(() => Ising.CreateParameters([new("chemicalpotential", 1)]));
         Assert.DoesNotContain("Did you mean", far.Message, StringComparison.Ordinal);

@@ -28,7 +28,7 @@ public sealed class FileModel : Model
             .. content.References.Select(r => new ExactReference(r.Quantity, r.Validity, r.Source)),
         ];
         CheckSolution();
-        if (HasTemperature && CriticalTemperature(CreateParameters()).Temperature is not null)
+        if (HasTemperature && (content.Critical is not null || content.Solution is not null))
             Parameters = [.. Parameters.Select(p => p.Name == ParameterDefinition.TemperatureName ? p with { DefaultsToCritical = true } : p)];
         SystemBuilder.Build(content, CreateParameters());
     }

@@ -13,7 +13,8 @@ public class ModelFileTests
         FileModel model = Samples.Parse(Samples.Ising);
         Assert.Equal(("ising-file", "Ising model", "Spins up and down.", "square"), (model.Name, model.Title, model.Description, model.Lattice));
         Assert.Equal(Samples.Ising, model.Definition);
-        Assert.Null(ModelCatalogue.Find("ising").Definition);
+        Assert.Equal(Samples.Ising, ModelCatalogue.StoredText(model));
+        Assert.Null(ModelCatalogue.StoredText(ModelCatalogue.Find("ising")));
         Assert.Equal(["temperature", "Jx", "Jy", "h"], model.Parameters.Select(p => p.Name));
         ParameterDefinition jx = model.Parameters[1];
         Assert.Equal((1, -5, 5, "energy", "Horizontal coupling", false), (jx.Default, jx.Minimum, jx.Maximum, jx.Unit, jx.Meaning, jx.IsInteger));
@@ -128,7 +129,7 @@ public class ModelFileTests
         Assert.Equal([new("h.im", 0.5)], model.Settings("h.im", "0.5"));
         Assert.Equal([new("q", 3)], model.Settings("q", "3"));
         Assert.Contains("0.2+0.1i", Assert.Throws<ModelException>(() => model.Settings("h", "no")).Message, StringComparison.Ordinal);
-        Assert.Contains("no number", Assert.Throws<ModelException>(() => model.Settings("q", "1,5")).Message, StringComparison.Ordinal);
+        Assert.Contains("finite number", Assert.Throws<ModelException>(() => model.Settings("q", "1,5")).Message, StringComparison.Ordinal);
     }
 
     [Fact]
@@ -136,7 +137,7 @@ public class ModelFileTests
     {
         string expression = Samples.Vertices[..Samples.Vertices.IndexOf("table", StringComparison.Ordinal)]
             + "weight = \"if(up + left == down + right, if(up == left, a, if(up == down, b, c)), 0)\"";
-        SixVertexModel built = new();
+        Model built = ModelCatalogue.Find("six-vertex");
         KeyValuePair<string, double>[] given = [new("a", 0.7), new("b", 1.1), new("c", 1.9)];
         VertexNetwork network = built.Network(built.CreateParameters(given));
         foreach (string text in new[] { Samples.Vertices, expression })

@@ -41,14 +41,24 @@ internal sealed class ComplexTorus
         return trace;
     }
 
-    /// <summary>The contraction with one tensor put in at each place in turn.</summary>
-    public Complex One(Complex[] impurity)
-        => Places().Aggregate(Complex.Zero, (sum, p) => sum + Contract((x, y) => (x, y) == p ? impurity : Vertex));
+    /// <summary>
+    /// The contraction with the n-th power of a sum of local terms, (o_1 + o_2 + ...)^n = sum of n! / (n_1! n_2! ...) o_1^n_1 o_2^n_2 ...
+    /// </summary>
+    /// <param name="powers">The tensor itself, and with o, o^2, ... put in.</param>
+    /// <param name="n">The power.</param>
+    public Complex Moment(Complex[][] powers, int n)
+    {
+        Complex sum = 0;
+        foreach (int[] split in Splits(n, lx * ly))
+            sum += split.Aggregate(Factorial(n), static (w, k) => w / Factorial(k)) * Contract((x, y) => powers[split[(y * lx) + x]]);
+        return sum;
+    }
 
-    /// <summary>The same with two tensors at all pairs of different places.</summary>
-    public Complex Two(Complex[] impurity)
-        => Places().SelectMany(p => Places().Where(q => q != p).Select(q => (p, q)))
-            .Aggregate(Complex.Zero, (sum, pair) => sum + Contract((x, y) => (x, y) == pair.p || (x, y) == pair.q ? impurity : Vertex));
+    private static double Factorial(int n) => n < 2 ? 1 : n * Factorial(n - 1);
+
+    // All ways to write n as a sum of that many whole numbers from 0.
+    private static IEnumerable<int[]> Splits(int n, int parts)
+        => parts == 1 ? [[n]] : Enumerable.Range(0, n + 1).SelectMany(first => Splits(n - first, parts - 1).Select(rest => (int[])[first, .. rest]));
 
     private static Complex[,] Multiply(Complex[,] a, Complex[,] b)
     {
@@ -65,8 +75,6 @@ internal sealed class ComplexTorus
         }
         return c;
     }
-
-    private IEnumerable<(int X, int Y)> Places() => Enumerable.Range(0, lx * ly).Select(i => (i % lx, i / lx));
 
     // The transfer matrix [upper, lower] of one row, built up column by column as [start, upper, lower, right].
     private Complex[,] Row(Func<int, int, Complex[]> at, int y)

@@ -13,7 +13,7 @@ internal static class NetworkCheck
 
     private const double MaxSteps = 5e6;
 
-    /// <summary>Builds and compares ln Z, the phase, and the first two moments of the observables on a torus of lx x ly vertices.</summary>
+    /// <summary>Builds and compares ln Z, the phase, and moments of the observables on a torus of lx x ly vertices.</summary>
     public static ModelNetwork Torus(LatticeSystem system, NetworkOptions options, int lx, int ly)
     {
         ModelNetwork built = NetworkBuilder.Build(system, options);
@@ -26,15 +26,15 @@ internal static class NetworkCheck
     public static bool IsSmall(ModelNetwork built, LatticeSystem system, int lx, int ly)
     {
         double v = built.Network.VerticalBond.Length, h = built.Network.HorizontalBond.Length;
-        double perCell = system.OnEdges ? (system.Lattice == LatticeKind.Honeycomb ? 3 : 2) : system.SitesPerCell;
-        double cells = (double)lx * ly * built.Network.SitesPerVertex / system.SitesPerCell;
+        int block = Block(built, system), variables = new TorusGeometry(system.Lattice, system.OnEdges, block * lx, block * ly).Variables;
         double steps = (h * h * h * Math.Pow(v, 2 * lx)) + Math.Pow(v, 3 * lx);
-        return Math.Pow(system.States, perCell * cells) <= MaxConfigurations && steps * lx * ly * lx * ly <= MaxSteps;
+        return Math.Pow(system.States, variables) <= MaxConfigurations && steps * lx * ly * lx * ly <= MaxSteps;
     }
 
-    public static void Compare(ModelNetwork built, LatticeSystem system, NetworkOptions options, int lx, int ly)
+    // powers is the highest power of an observable on two to four vertices: on one it is always four, on more at most two.
+    public static void Compare(ModelNetwork built, LatticeSystem system, NetworkOptions options, int lx, int ly, int powers = TorusOracle.HighestPower)
     {
-        int block = built.Network.SitesPerVertex == 4 * system.SitesPerCell ? 2 : 1;
+        int block = Block(built, system);
         var oracle = new TorusOracle(system, options, block * lx, block * ly);
         var torus = new ComplexTorus(built.Network, lx, ly);
         if (double.IsNegativeInfinity(oracle.LogScale))
@@ -47,11 +47,19 @@ internal static class NetworkCheck
         for (int i = 0; i < options.Observables.Length; i++)
         {
             Impurity impurity = built.Impurities[i];
-            Complex[] first = torus.Dense((u, l, d, r) => impurity.Element(1, u, l, d, r)), second = torus.Dense((u, l, d, r) => impurity.Element(2, u, l, d, r));
-            Near(oracle.Moments[i].First, factor * torus.One(first), Math.Max(oracle.Scale, oracle.MomentScales[i].First), impurity.Name);
-            Near(oracle.Moments[i].Second, factor * (torus.One(second) + torus.Two(first)), Math.Max(oracle.Scale, oracle.MomentScales[i].Second), impurity.Name + "^2");
+            int highest = (lx * ly) switch { 1 => TorusOracle.HighestPower, <= 4 => powers, _ => Math.Min(2, powers) };
+            Complex[][] tensors = Powers(torus, impurity, highest);
+            for (int n = 1; n <= highest; n++)
+                Near(oracle.Moments[i][n], factor * torus.Moment(tensors, n), Math.Max(oracle.Scale, oracle.MomentScales[i][n]), $"{impurity.Name}^{n}");
         }
     }
+
+    // The vertex with powers 0 to n of an observable put in.
+    private static Complex[][] Powers(ComplexTorus torus, Impurity impurity, int n)
+        => [torus.Vertex, .. Enumerable.Range(1, n).Select(k => torus.Dense((u, l, d, r) => impurity.Element(k, u, l, d, r)))];
+
+    // Cells along the side of a vertex.
+    private static int Block(ModelNetwork built, LatticeSystem system) => built.Network.SitesPerVertex == 4 * system.SitesPerCell ? 2 : 1;
 
     private static void Near(Complex expected, Complex actual, double scale, string what)
         => Assert.True(Complex.Abs(expected - actual) <= Tolerance * scale, $"{what}: {expected} expected, {actual} found, scale {scale:R}, off by {Complex.Abs(expected - actual) / scale:E2}.");

@@ -13,6 +13,7 @@ public sealed class NetworkFormTests
             ("square", [NetworkForm.Bond, NetworkForm.Face, NetworkForm.Row]),
             ("square-potts", [NetworkForm.Bond, NetworkForm.Face, NetworkForm.Row]),
             ("square-faces", [NetworkForm.Face, NetworkForm.Row]),
+            ("antidiagonal", [NetworkForm.Face, NetworkForm.Row]),
             ("hard-squares", [NetworkForm.Bond, NetworkForm.Face, NetworkForm.Row]),
             ("infinite-temperature", [NetworkForm.Bond, NetworkForm.Face, NetworkForm.Row]),
             ("triangular", [NetworkForm.Face, NetworkForm.Row]),
@@ -52,6 +53,8 @@ public sealed class NetworkFormTests
     [InlineData("honeycomb-potts", NetworkForm.Bond)]
     [InlineData("square-faces", NetworkForm.Face)]
     [InlineData("square-faces", NetworkForm.Row)]
+    [InlineData("antidiagonal", NetworkForm.Face)]
+    [InlineData("antidiagonal", NetworkForm.Row)]
     [InlineData("triangular", NetworkForm.Face)]
     [InlineData("kagome", NetworkForm.Triangles)]
     public void Staggered_observables_and_fields_are_exact(string name, NetworkForm form)
@@ -63,11 +66,30 @@ public sealed class NetworkFormTests
         NetworkCheck.Torus(system, measured with { Fields = [("staggered", 0.3)] }, 1, 2);
     }
 
+    // Blocks of 2 x 2 vertices with 8 edges; two of them are sums over 2^16 configurations.
+    [Theory]
+    [InlineData("six-vertex", 1, 1)]
+    [InlineData("six-vertex", 2, 1)]
+    [InlineData("dimers", 1, 1)]
+    [InlineData("dimers", 1, 2)]
+    [InlineData("honeycomb-dimers", 2, 2)]
+    [InlineData("honeycomb-loops", 2, 1)]
+    public void Staggered_observables_and_fields_of_vertex_models_are_exact(string name, int lx, int ly)
+    {
+        LatticeSystem plain = Named(name), system = plain with { Observables = [.. plain.Observables, plain.Observables[0] with { Name = "staggered", IsStaggered = true }] };
+        foreach ((string, double)[] fields in new (string, double)[][] { [], [("staggered", 0.3)] })
+        {
+            var options = new NetworkOptions { Observables = ["staggered", "sum"], Fields = [.. fields] };
+            NetworkCheck.Compare(NetworkBuilder.Build(system, options), system, options, lx, ly);
+        }
+    }
+
     private static LatticeSystem Named(string name) => name switch
     {
         "square" => Systems.Ising(LatticeKind.Square, (Cluster.Bond1, 0.4), (Cluster.Bond2, -0.7), (Cluster.Site, 0.1)),
         "square-potts" => Systems.Pairs(LatticeKind.Square, 3, static (a, b) => a == b ? 0.9 : 0, Cluster.Bond1, Cluster.Bond2),
         "square-faces" => Systems.Ising(LatticeKind.Square, (Cluster.Bond1, 0.4), (Cluster.Bond2, 0.5), (Cluster.Diagonal, -0.3), (Cluster.Antidiagonal, -0.2), (Cluster.Face, 0.2)),
+        "antidiagonal" => Systems.Ising(LatticeKind.Square, (Cluster.Antidiagonal, 0.7)),
         "hard-squares" => Systems.OfSites(
             LatticeKind.Square,
             ["empty", "full"],

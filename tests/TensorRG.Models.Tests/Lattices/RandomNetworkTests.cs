@@ -27,7 +27,7 @@ public sealed class RandomNetworkTests
         foreach ((int lx, int ly) in new[] { (1, 1), (2, 1), (1, 2) })
         {
             if (NetworkCheck.IsSmall(built, random.System, lx, ly))
-                NetworkCheck.Compare(built, random.System, random.Options with { Form = form }, lx, ly);
+                NetworkCheck.Compare(built, random.System, random.Options with { Form = form }, lx, ly, powers: 2);
         }
     }
 }

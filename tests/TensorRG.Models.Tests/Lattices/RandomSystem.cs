@@ -20,7 +20,7 @@ internal sealed class RandomSystem
         bool onEdges = lattice is LatticeKind.Square or LatticeKind.Honeycomb && random.Next(4) == 0;
         states = lattice == LatticeKind.Kagome || onEdges ? random.Next(2, 4) : random.Next(2, 5);
         symmetry = Symmetry(random.Next(4));
-        bool complex = random.Next(4) == 0, excludes = random.Next(4) == 0, staggered = random.Next(5) == 0 && states == 2 && !onEdges;
+        bool complex = random.Next(4) == 0, excludes = random.Next(4) == 0, staggered = random.Next(5) == 0 && states == 2;
         Cluster[] clusters = Clusters(lattice, onEdges);
         Cluster[] used = random.Next(2) == 0 ? clusters : [.. clusters.Where(static c => c is Cluster.Site or Cluster.Bond1 or Cluster.Bond2 or Cluster.Vertex)];
         ImmutableArray<ClusterTable> weights = [.. used.Where(_ => random.Next(5) > 0).Select(c => Table(c, Arity(c, lattice), complex, excludes))];

@@ -10,10 +10,14 @@ namespace TensorRG.Models.Tests.Lattices;
 /// </summary>
 internal sealed class TorusOracle
 {
+    /// <summary>The highest power of an observable.</summary>
+    public const int HighestPower = 4;
+
     private readonly LatticeSystem system;
     private readonly NetworkOptions options;
     private readonly int lx;
     private readonly int ly;
+    private readonly TorusGeometry geometry;
     private readonly int variables;
 
     public TorusOracle(LatticeSystem system, NetworkOptions options, int lx, int ly)
@@ -22,8 +26,8 @@ internal sealed class TorusOracle
         this.options = options;
         this.lx = lx;
         this.ly = ly;
-        PerCell = system.OnEdges ? (system.Lattice == LatticeKind.Honeycomb ? 3 : 2) : system.SitesPerCell;
-        variables = PerCell * lx * ly;
+        geometry = new TorusGeometry(system.Lattice, system.OnEdges, lx, ly);
+        variables = geometry.Variables;
         Sum();
     }
 
@@ -37,13 +41,11 @@ internal sealed class TorusOracle
     /// <summary>The sum of the absolute values of the weights, likewise.</summary>
     public double Scale { get; private set; }
 
-    /// <summary>Sum over configurations of weight times O^n, n = 1 and 2, for each observable.</summary>
-    public (Complex First, Complex Second)[] Moments { get; private set; } = [];
+    /// <summary>Sum over configurations of weight times O^n, n = 0 to 4, for each observable.</summary>
+    public Complex[][] Moments { get; private set; } = [];
 
     /// <summary>The same with absolute values.</summary>
-    public (double First, double Second)[] MomentScales { get; private set; } = [];
-
-    private int PerCell { get; }
+    public double[][] MomentScales { get; private set; } = [];
 
     private void Sum()
     {
@@ -69,8 +71,8 @@ internal sealed class TorusOracle
     private void Accumulate(Terms weight, Terms[] observables, int count, int[] states)
     {
         var z = new ComplexSum();
-        ComplexSum[] first = [.. observables.Select(static _ => new ComplexSum())], second = [.. observables.Select(static _ => new ComplexSum())];
-        var scales = new (double First, double Second)[observables.Length];
+        ComplexSum[][] sums = [.. observables.Select(static _ => Powers(static _ => new ComplexSum()))];
+        double[][] scales = [.. observables.Select(static _ => Powers(static _ => 0.0))];
         for (int k = 0; k < count; k++)
         {
             Complex log = LogWeight(weight, k, states);
@@ -81,17 +83,22 @@ internal sealed class TorusOracle
             z.Add(w);
             Scale += size;
             for (int i = 0; i < observables.Length; i++)
-            {
-                Complex o = observables[i].At(states);
-                first[i].Add(w * o);
-                second[i].Add(w * o * o);
-                double bound = observables[i].Bound(states);
-                scales[i] = (scales[i].First + (size * bound), scales[i].Second + (size * bound * bound));
-            }
+                Add(sums[i], scales[i], w, observables[i].At(states), size, observables[i].Bound(states));
         }
         Z = z.Value;
-        Moments = [.. first.Zip(second, static (a, b) => (a.Value, b.Value))];
+        Moments = [.. sums.Select(static s => s.Select(static x => x.Value).ToArray())];
         MomentScales = scales;
+    }
+
+    private static T[] Powers<T>(Func<int, T> value) => [.. Enumerable.Range(0, HighestPower + 1).Select(value)];
+
+    private static void Add(ComplexSum[] sums, double[] scales, Complex weight, Complex value, double size, double bound)
+    {
+        for (int n = 0; n <= HighestPower; n++, weight *= value, size *= bound)
+        {
+            sums[n].Add(weight);
+            scales[n] += size;
+        }
     }
 
     private Complex LogWeight(Terms weight, int number, int[] states)
@@ -104,69 +111,6 @@ internal sealed class TorusOracle
         }
         return weight.At(states) + measure;
     }
-
-    private int Site(int x, int y, int kind) => ((((((y % ly) + ly) % ly) * lx) + (((x % lx) + lx) % lx)) * PerCell) + kind;
-
-    /// <summary>The clusters of a kind that belong to cell (x, y), and the sign of a staggered term there.</summary>
-    private IEnumerable<(int[] Sites, int Sign)> Clusters(Cluster cluster, int x, int y)
-    {
-        int sign = (x + y) % 2 == 0 ? 1 : -1;
-        int[][] sites = system.OnEdges ? Edges(x, y) : system.Lattice switch
-        {
-            LatticeKind.Square => [Square(cluster, x, y)],
-            LatticeKind.Triangular => [Triangular(cluster, x, y)],
-            LatticeKind.Honeycomb => Honeycomb(cluster, x, y),
-            _ => Kagome(cluster, x, y),
-        };
-        return sites.Select((s, i) => (s, system.Lattice == LatticeKind.Honeycomb ? (i == 0 ? 1 : -1) : sign));
-    }
-
-    // Edge 0 of a square cell leaves (x, y) to the right, edge 1 downward. Honeycomb: edge j of a cell is the bond in direction j + 1 named by it.
-    private int[][] Edges(int x, int y) => system.Lattice == LatticeKind.Square
-        ? [[Site(x, y - 1, 1), Site(x - 1, y, 0), Site(x, y, 1), Site(x, y, 0)]]
-        : [[Site(x, y, 0), Site(x - 1, y, 1), Site(x, y - 1, 2)], [Site(x, y, 0), Site(x, y, 1), Site(x, y, 2)]];
-
-    private int[] Square(Cluster cluster, int x, int y) => cluster switch
-    {
-        Cluster.Site => [Site(x, y, 0)],
-        Cluster.Bond1 => [Site(x, y, 0), Site(x + 1, y, 0)],
-        Cluster.Bond2 => [Site(x, y, 0), Site(x, y + 1, 0)],
-        Cluster.Diagonal => [Site(x, y, 0), Site(x + 1, y + 1, 0)],
-        Cluster.Antidiagonal => [Site(x + 1, y, 0), Site(x, y + 1, 0)],
-        Cluster.Face => [Site(x, y, 0), Site(x + 1, y, 0), Site(x + 1, y + 1, 0), Site(x, y + 1, 0)],
-        _ => throw new ArgumentOutOfRangeException(nameof(cluster)),
-    };
-
-    private int[] Triangular(Cluster cluster, int x, int y) => cluster switch
-    {
-        Cluster.Site => [Site(x, y, 0)],
-        Cluster.Bond1 => [Site(x, y, 0), Site(x + 1, y, 0)],
-        Cluster.Bond2 => [Site(x, y, 0), Site(x, y + 1, 0)],
-        Cluster.Bond3 => [Site(x, y, 0), Site(x + 1, y + 1, 0)],
-        Cluster.UpTriangle => [Site(x, y, 0), Site(x, y + 1, 0), Site(x + 1, y + 1, 0)],
-        Cluster.DownTriangle => [Site(x, y, 0), Site(x + 1, y, 0), Site(x + 1, y + 1, 0)],
-        _ => throw new ArgumentOutOfRangeException(nameof(cluster)),
-    };
-
-    private int[][] Honeycomb(Cluster cluster, int x, int y) => cluster switch
-    {
-        Cluster.Site => [[Site(x, y, 0)], [Site(x, y, 1)]],
-        Cluster.Bond1 => [[Site(x, y, 0), Site(x, y, 1)]],
-        Cluster.Bond2 => [[Site(x + 1, y, 0), Site(x, y, 1)]],
-        Cluster.Bond3 => [[Site(x, y + 1, 0), Site(x, y, 1)]],
-        _ => throw new ArgumentOutOfRangeException(nameof(cluster)),
-    };
-
-    private int[][] Kagome(Cluster cluster, int x, int y) => cluster switch
-    {
-        Cluster.Site => [[Site(x, y, 0)], [Site(x, y, 1)], [Site(x, y, 2)]],
-        Cluster.Bond1 => [[Site(x, y, 0), Site(x, y, 1)], [Site(x, y, 1), Site(x + 1, y, 0)]],
-        Cluster.Bond2 => [[Site(x, y, 0), Site(x, y, 2)], [Site(x, y, 2), Site(x, y + 1, 0)]],
-        Cluster.Bond3 => [[Site(x, y, 1), Site(x, y, 2)], [Site(x - 1, y, 1), Site(x, y - 1, 2)]],
-        Cluster.UpTriangle => [[Site(x, y, 0), Site(x, y, 1), Site(x, y, 2)]],
-        Cluster.DownTriangle => [[Site(x, y, 0), Site(x - 1, y, 1), Site(x, y - 1, 2)]],
-        _ => throw new ArgumentOutOfRangeException(nameof(cluster)),
-    };
 
     /// <summary>A sum of terms over the whole torus.</summary>
     private sealed class Terms(TorusOracle torus)
@@ -183,7 +127,7 @@ internal sealed class TorusOracle
         {
             for (int cell = 0; cell < torus.lx * torus.ly; cell++)
             {
-                foreach ((int[] sites, int sign) in torus.Clusters(table.Cluster, cell % torus.lx, cell / torus.lx))
+                foreach ((int[] sites, int sign) in torus.geometry.Clusters(table.Cluster, cell % torus.lx, cell / torus.lx))
                     terms.Add(([.. table.Values], sites, staggered ? factor * sign : factor));
             }
         }

@@ -54,6 +54,15 @@ internal sealed class Cells
         Complex[][] Powers(int sign) => [.. Enumerable.Range(0, power + 1).Select(n => dense.Contract(raw.Weighted(observable, n, sign)))];
     }
 
+    /// <summary>The product of the norms of the four basis vectors of an element: states of small weight have large ones on the ingoing legs.</summary>
+    public Func<int, int, int, int, double> Magnification()
+    {
+        double[] up = Pairs(vertical.InNorms()), left = Pairs(horizontal.InNorms()), down = Pairs(vertical.OutNorms()), right = Pairs(horizontal.OutNorms());
+        return (u, l, d, r) => up[u] * left[l] * down[d] * right[r];
+    }
+
+    private double[] Pairs(double[] norms) => terms.NeedsBlock ? [.. norms.SelectMany(a => norms.Select(b => a * b))] : norms;
+
     private int[][] Legs(LegBasis leg, IReadOnlyList<int> orders)
         => terms.NeedsBlock ? [.. leg.Charges.SelectMany(a => leg.Charges.Select(b => Sum(a, b, orders)))] : leg.Charges;
 
