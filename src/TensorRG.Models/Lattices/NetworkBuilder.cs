@@ -28,7 +28,7 @@ public static class NetworkBuilder
         GradedVertex graded = Grading.Find(raw, form, terms);
         var cells = new Cells(raw, terms, graded.Vertical, graded.Horizontal);
         VertexNetwork network = Network(cells, graded, form, terms, raw, out double scale);
-        ImmutableArray<Impurity> impurities = [.. terms.Observables.Select(o => Impurity(cells, o, network, scale))];
+        ImmutableArray<Impurity> impurities = [.. terms.Observables.Select(o => Impurity(cells, o, network, form, scale))];
         return options.Graded
             ? new ModelNetwork(network, impurities, form.Form, why, graded.Symmetry)
             : new ModelNetwork(network.Ungraded(), impurities, form.Form, why, "none");
@@ -48,17 +48,27 @@ public static class NetworkBuilder
         VertexNetwork network = terms.IsReal
             ? VertexNetwork.Real(graded.Orders, vertical, horizontal, values.RealAt, form.Sites * members, logPrefactor)
             : VertexNetwork.OfComplex(graded.Orders, vertical, horizontal, values.At, form.Sites * members, logPrefactor);
+        if (form.VerticalWeight is not null)
+            values.DropRoundOff(cells.Magnification());
         values.Conserve(network, terms.IsReal, cells.Magnification());
         return network;
     }
 
-    private static Impurity Impurity(Cells cells, LocalObservable observable, VertexNetwork network, double scale)
+    private static Impurity Impurity(Cells cells, LocalObservable observable, VertexNetwork network, VertexForm form, double scale)
     {
         int v = network.VerticalBond.Length, h = network.HorizontalBond.Length;
-        Lazy<Elements>[] powers = [.. Enumerable.Range(1, 4).Select(n => new Lazy<Elements>(() => new Elements(cells.Weighted(observable, n), v, h, scale)))];
+        Lazy<Elements>[] powers = [.. Enumerable.Range(1, 4).Select(n => new Lazy<Elements>(() => Weighted(n)))];
         return new Impurity(observable.Name, (n, u, l, d, r) => n is >= 1 and <= 4
             ? powers[n - 1].Value.At(u, l, d, r)
             : throw new ArgumentOutOfRangeException(nameof(n), n, "The power of an observable in one vertex is 1 to 4."));
+
+        Elements Weighted(int n)
+        {
+            var elements = new Elements(cells.Weighted(observable, n), v, h, scale);
+            if (form.VerticalWeight is not null)
+                elements.DropRoundOff(cells.Magnification());
+            return elements;
+        }
     }
 
     private static ImmutableArray<BondState> States(int[][] charges)

@@ -8,6 +8,7 @@ internal sealed class Elements
     // What the change of basis leaves of forbidden elements is round-off; more than this, or more than this share of what it magnifies, would be a wrong symmetry.
     private const double RoundOff = 1e-9;
     private const double RelativeRoundOff = 1e-12;
+    private const double Epsilon = 4e-16;
 
     private readonly Complex[] values;
     private readonly int vertical;
@@ -30,6 +31,21 @@ internal sealed class Elements
 
     /// <summary>The real part of one element.</summary>
     public double RealAt(int u, int l, int d, int r) => At(u, l, d, r).Real;
+
+    /// <summary>
+    /// Makes elements exactly zero that are no more than round-off of the raw weights, magnified by the bases. Left in place they would look as important
+    /// as any other element, although the neighbours of such states weigh next to nothing.
+    /// </summary>
+    /// <param name="magnified">How much the bases magnify the round-off of the raw weights in element u, l, d, r.</param>
+    public void DropRoundOff(Func<int, int, int, int, double> magnified)
+    {
+        for (int i = 0; i < values.Length; i++)
+        {
+            (int u, int l, int d, int r) = (i / (horizontal * vertical * horizontal), i / (vertical * horizontal) % horizontal, i / horizontal % vertical, i % horizontal);
+            if (Complex.Abs(values[i]) < Epsilon * magnified(u, l, d, r) / scale)
+                values[i] = 0;
+        }
+    }
 
     /// <summary>Makes elements that break a charge, and imaginary parts of a real tensor, exactly zero.</summary>
     /// <param name="network">The network with its charges.</param>
