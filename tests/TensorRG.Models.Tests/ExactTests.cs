@@ -83,6 +83,19 @@ public class ExactTests
         Near.Check(ReferenceValues.Get("clock4-tc"), Set("clock", ("q", 4)).Temperature, 1e-15, "q = 4");
     }
 
+    // R. J. Baxter, H. N. V. Temperley, S. E. Ashley, Proc. R. Soc. Lond. A 358, 535 (1978): v^3 + 3 v^2 = q with v = exp(J/T) - 1.
+    [Theory]
+    [InlineData(2)]
+    [InlineData(3)]
+    [InlineData(4)]
+    [InlineData(5)]
+    [InlineData(64)]
+    public void The_transition_of_the_triangular_Potts_model_solves_its_equation(int q)
+    {
+        double v = Math.Exp(0.8 / Set("potts-triangular", ("q", q), ("J", 0.8)).Temperature) - 1;
+        Near.Check(q, (v * v * v) + (3 * v * v), 4e-15, "q");
+    }
+
     // E. H. Lieb, Phys. Rev. 162, 162 (1967) and Phys. Rev. Lett. 18, 1046 (1967): rows of reference-values.json.
     [Fact]
     public void Square_ice_and_the_F_model_agree_with_the_table()

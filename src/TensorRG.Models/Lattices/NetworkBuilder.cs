@@ -38,7 +38,7 @@ public static class NetworkBuilder
     {
         ImmutableArray<BondState> vertical = States(cells.Vertical(graded.Orders)), horizontal = States(cells.Horizontal(graded.Orders));
         Complex[] elements = cells.Weights();
-        double largest = elements.Max(static x => Complex.Abs(x));
+        double largest = elements.Select(static x => Complex.Abs(x)).DefaultIfEmpty(0).Max(); // No state may occur on both ends of a bond.
         if (largest == 0)
             throw new ModelException("All elements of the vertex vanish: no configuration of a row of vertices is allowed; allow at least one.");
         scale = largest;
