@@ -42,13 +42,14 @@ internal static class ExplanationText
         page.Fact("network", plan.Choice + (plan.IsFromSolution ? " Elements from formulas of the exact solution." : ""));
         page.Fact("other forms", plan.Others.IsEmpty ? "none" : string.Join(", ", plan.Others.Select(static f => "--form " + NetworkForms.Name(f))));
         page.Fact("tensor", FormattableString.Invariant($"{plan.VerticalBond.Length} x {plan.HorizontalBond.Length} x {plan.VerticalBond.Length} x {plan.HorizontalBond.Length} (up, left, down, right), {(plan.IsReal ? "real" : "complex")}"));
-        page.Fact("", $"vertical bond: {Bond(plan.VerticalBond)}; horizontal bond: {Bond(plan.HorizontalBond)}");
+        string vertical = Bond(plan.VerticalBond), horizontal = Bond(plan.HorizontalBond);
+        page.Fact("", vertical == horizontal ? "both bonds: " + vertical : $"vertical bond: {vertical}; horizontal bond: {horizontal}");
         page.Line();
     }
 
     private static string Constraints(ImmutableArray<TermView> terms)
     {
-        string[] found = [.. terms.Where(static t => t.Excluded > 0).Select(static t => FormattableString.Invariant($"{t.Where}: {t.Excluded} of {t.Values.Length} configurations are excluded")).Distinct()];
+        string[] found = [.. terms.Where(static t => t.Excluded > 0).Select(static t => FormattableString.Invariant($"{t.Where}: {t.Excluded} of {t.Values.Length} configurations excluded")).Distinct()];
         return found.Length == 0 ? "none" : string.Join("; ", found);
     }
 
@@ -58,20 +59,24 @@ internal static class ExplanationText
         if (bond[0].Charge.IsEmpty)
             return dimension + " without charge";
         IReadOnlyList<(ImmutableArray<int> Charge, int States)> charges = ModelExplanation.Charges(bond);
-        return charges.Count > MostCharges
-            ? FormattableString.Invariant($"{dimension}, {charges.Count} charges with {charges.Min(static c => c.States)} to {charges.Max(static c => c.States)} each")
-            : $"{dimension}, {string.Join(", ", charges.Select(static c => FormattableString.Invariant($"{c.States} of charge {string.Join(',', c.Charge)}")))}";
+        int least = charges.Min(static c => c.States), most = charges.Max(static c => c.States);
+        string listed = charges.Count <= MostCharges
+            ? string.Join(" ", charges.Select(static c => c.Charge.Length == 1 ? FormattableString.Invariant($"{c.Charge[0]}") : $"({string.Join(',', c.Charge)})"))
+            : FormattableString.Invariant($"{charges.Count} different");
+        return least == most
+            ? FormattableString.Invariant($"{dimension}, {least} of each charge: {listed}")
+            : FormattableString.Invariant($"{dimension}, charges {listed}: {string.Join(" ", charges.Select(static c => c.States))} of each");
     }
 
     private static void Weights(Page page, ModelExplanation explanation)
     {
         bool hasEnergy = explanation.Terms.Any(static t => t.Kind == TermKind.Energy);
         string excluded = explanation.Terms.Any(static t => t.Excluded > 0) ? "; x: excluded" : "";
-        page.Line($"{(hasEnergy ? "Energies, weight exp(-E/T)" : "Weights")} at {ModelLine.Parameters(explanation.Parameters)}{excluded}");
+        page.Paragraphs($"{(hasEnergy ? "Energies, weight exp(-E/T)" : "Weights")} at {ModelLine.Parameters(explanation.Parameters)}{excluded}");
         foreach (TermView term in explanation.Terms)
             TermText.Write(page, term, explanation.System.StateLabels);
         if (explanation.Terms.IsEmpty)
-            page.Line("  1 for all states");
+            page.Item("1 for all states");
         page.Line();
     }
 
@@ -88,15 +93,15 @@ internal static class ExplanationText
             p.Meaning + Unit(p.Unit),
         ]));
         foreach (ParameterShorthand shorthand in model.Shorthands)
-            page.Line($"  {shorthand.Name} sets {string.Join(" and ", shorthand.Targets)} at once");
+            page.Item($"{shorthand.Name} sets {string.Join(" and ", shorthand.Targets)} at once");
         if (model.HasTemperature)
-            page.Fact("", Critical(model.CriticalTemperature(explanation.Parameters)));
+            page.Item(Critical(model.CriticalTemperature(explanation.Parameters)));
         page.Line();
     }
 
     private static string Critical(CriticalPoint point) => point.Temperature is { } known
-        ? $"  Critical temperature at these parameters: {Reports.NumberFormat.RoundTrip(known.Value)} ({known.Source})"
-        : $"  No critical temperature is known exactly at these parameters: {point.Reason}.";
+        ? $"Critical temperature at these parameters: {Reports.NumberFormat.RoundTrip(known.Value)} ({known.Source})"
+        : $"No critical temperature is known exactly at these parameters: {point.Reason}.";
 
     private static void Observables(Page page, ModelExplanation explanation)
     {
@@ -105,7 +110,7 @@ internal static class ExplanationText
         if (observables.Length > 0)
             page.Table(["name", "kind", "meaning"], observables.Select(o => (string[])[o.Name, Kind(o, explanation.Breaks(o)), o.Meaning + Unit(o.Unit)]));
         string[] further = [.. explanation.Quantities.Except(observables.Select(static o => o.Name)), .. observables.Any(static o => o.IsOrderParameter) ? (string[])["susceptibility"] : []];
-        page.Line($"  {(observables.Length > 0 ? "and" : "")} {string.Join(", ", further)}".Replace("   ", "  ", StringComparison.Ordinal));
+        page.Item($"{(observables.Length > 0 ? "and " : "")}{string.Join(", ", further)}");
         page.Line();
     }
 
@@ -125,9 +130,9 @@ internal static class ExplanationText
     {
         page.Line("Exact references");
         if (explanation.Model.ExactReferences.Count == 0)
-            page.Line("  none");
+            page.Item("none");
         else
-            page.Table(["quantity", "value here", "where", "source"], explanation.Model.ExactReferences.Select(r => (string[])[QuantityNames.Words(r.Quantity), Value(explanation, r.Quantity), r.Validity, r.Source]));
+            page.Table(["quantity", "value here", "where, and by whom"], explanation.Model.ExactReferences.Select(r => (string[])[QuantityNames.Words(r.Quantity), Value(explanation, r.Quantity), $"{r.Validity}: {r.Source}"]));
         page.Line();
     }
 

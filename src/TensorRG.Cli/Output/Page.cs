@@ -25,6 +25,9 @@ internal sealed class Page
             Put("", 0, paragraph);
     }
 
+    /// <summary>An indented line whose continuations are indented further.</summary>
+    public void Item(string text) => Put("  ", 2 * Indent, text, Indent);
+
     /// <summary>A label and what it says; an empty label goes on with the fact before.</summary>
     public void Fact(string label, string text) => Put(label, LabelWidth, text);
 
@@ -44,9 +47,9 @@ internal sealed class Page
     /// <inheritdoc/>
     public override string ToString() => _text.ToString();
 
-    private void Put(string start, int indent, string text)
+    private void Put(string start, int indent, string text, int? first = null)
     {
-        string line = start.PadRight(indent);
+        string line = start.PadRight(first ?? indent);
         bool isEmpty = true;
         foreach (string word in text.Split((char[])[' ', '\n', '\r'], StringSplitOptions.RemoveEmptyEntries))
         {

@@ -74,7 +74,7 @@ public static class NetworkBuilder
         VertexNetwork network = terms.IsReal
             ? VertexNetwork.Real(graded.Orders, vertical, horizontal, values.RealAt, form.Sites * members, logPrefactor)
             : VertexNetwork.OfComplex(graded.Orders, vertical, horizontal, values.At, form.Sites * members, logPrefactor);
-        values.Conserve(network, terms.IsReal);
+        values.Conserve(network, terms.IsReal, cells.Noise(largest));
         return network;
     }
 

@@ -64,6 +64,26 @@ internal sealed class Cells
         Complex[][] Powers(int sign) => [.. Enumerable.Range(0, power + 1).Select(n => dense.Contract(raw.Weighted(observable, n, sign)))];
     }
 
+    /// <summary>
+    /// Round-off of an element divided by a scale. The raw vertex is right to the last digit of its largest element; a state that weighs s has its
+    /// ingoing leg divided by the root of s, and the last digit with it: 4 q epsilon |In_u| |In_l| |Out_d| |Out_r| / scale.
+    /// </summary>
+    /// <param name="scale">What the elements are divided by.</param>
+    public Func<int, int, int, int, double> Noise(double scale)
+    {
+        double unit = 4 * Constants.Epsilon * terms.System.States / scale;
+        double[] u = Norms(vertical.Size, (k, i) => vertical.In[k, i], vertical.In.GetLength(1)), l = Norms(horizontal.Size, (k, i) => horizontal.In[k, i], horizontal.In.GetLength(1));
+        double[] d = Norms(vertical.Size, (k, i) => vertical.Out[i, k], vertical.In.GetLength(1)), r = Norms(horizontal.Size, (k, i) => horizontal.Out[i, k], horizontal.In.GetLength(1));
+        return (a, b, c, e) => unit * u[a] * l[b] * d[c] * r[e];
+    }
+
+    // In a block a leg is a pair of states.
+    private double[] Norms(int size, Func<int, int, Complex> entry, int length)
+    {
+        double[] single = [.. Enumerable.Range(0, size).Select(k => Math.Sqrt(Enumerable.Range(0, length).Sum(i => Math.Pow(Complex.Abs(entry(k, i)), 2))))];
+        return terms.NeedsBlock ? [.. single.SelectMany(x => single.Select(y => x * y))] : single;
+    }
+
     private int[][] Legs(LegBasis leg, IReadOnlyList<int> orders)
         => terms.NeedsBlock ? [.. leg.Charges.SelectMany(a => leg.Charges.Select(b => Sum(a, b, orders)))] : leg.Charges;
 
