@@ -9,7 +9,10 @@ public sealed class ModelsTests : IDisposable
     private const int Width = 100;
     private readonly TemporaryFolder _folder = new();
 
-    public static TheoryData<string> Names => [.. Directory.GetFiles(Path.Combine(Repository.Root, "src/TensorRG.Models/Catalogue")).Select(Path.GetFileNameWithoutExtension)!];
+    public static TheoryData<string> Names => [.. FileNames];
+
+    private static IEnumerable<string> FileNames
+        => Directory.GetFiles(Path.Combine(Repository.Root, "src/TensorRG.Models/Catalogue")).Select(static f => Path.GetFileNameWithoutExtension(f)).Order(StringComparer.Ordinal);
 
     public void Dispose() => _folder.Dispose();
 
@@ -18,7 +21,7 @@ public sealed class ModelsTests : IDisposable
     {
         string list = CommandLineProcess.Run(_folder.Path, "models").Expect(0).Out;
         JsonArray models = InProcess.Run(_folder.Path, "models", "--json").Expect(0).Json["models"]!.AsArray();
-        Assert.Equal(Names.Select(static row => (string)row[0]).Order(StringComparer.Ordinal), models.Select(static m => (string)m!["name"]!));
+        Assert.Equal(FileNames, models.Select(static m => (string)m!["name"]!));
         foreach (JsonNode? model in models)
         {
             string symbols = string.Join(", ", model!["parameters"]!.AsArray().Select(static p => (string)p!["symbol"]!));
