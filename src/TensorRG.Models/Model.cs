@@ -99,6 +99,12 @@ public abstract class Model
     /// <param name="parameters">A set of this model.</param>
     public LatticeSystem? System(ParameterSet parameters) => DescribeSystem(Own(parameters));
 
+    /// <summary>What <see cref="Network"/> gives, without its elements: form, symmetry, bonds.</summary>
+    /// <param name="parameters">A set of this model.</param>
+    /// <param name="form">Form of the network; Auto lets the model choose.</param>
+    /// <exception cref="ModelException">The model cannot be written in that form, or has no tables.</exception>
+    public NetworkPlan Plan(ParameterSet parameters, NetworkForm form = NetworkForm.Auto) => FindPlan(Own(parameters), form);
+
     /// <summary>An exact value, or null where none is known.</summary>
     /// <param name="quantity">Which quantity.</param>
     /// <param name="parameters">A set of this model.</param>
@@ -146,6 +152,12 @@ public abstract class Model
     /// <param name="parameters">A set of this model.</param>
     protected virtual LatticeSystem? DescribeSystem(ParameterSet parameters) => null;
 
+    /// <summary>See <see cref="Plan"/>; the set is known to be this model's.</summary>
+    /// <param name="parameters">A set of this model.</param>
+    /// <param name="form">Form of the network.</param>
+    protected virtual NetworkPlan FindPlan(ParameterSet parameters, NetworkForm form)
+        => NetworkBuilder.Plan(Tables(parameters), form);
+
     /// <summary>See <see cref="Exact(Quantity, ParameterSet)"/>; the set is known to be this model's.</summary>
     /// <param name="quantity">Which quantity.</param>
     /// <param name="parameters">A set of this model.</param>
@@ -158,9 +170,10 @@ public abstract class Model
         => QuantityNames.Find(quantity) is { } known ? FindExact(known, parameters) : null;
 
     private VertexNetwork OfForm(ParameterSet parameters, NetworkForm form)
-        => DescribeSystem(parameters) is { } system
-            ? NetworkBuilder.Build(system, new NetworkOptions { Form = form }).Network
-            : throw new ModelException($"The model '{Name}' is given by one network alone: leave the form to the tool.");
+        => NetworkBuilder.Build(Tables(parameters), new NetworkOptions { Form = form }).Network;
+
+    private LatticeSystem Tables(ParameterSet parameters)
+        => DescribeSystem(parameters) ?? throw new ModelException($"The model '{Name}' is given by one network alone: leave the form to the tool.");
 
     private ParameterSet AtCriticalIfAllowed(ParameterSet set, ParameterDefinition temperature)
         => FindCriticalTemperature(set).Temperature is { } critical && temperature.Allows(critical.Value)

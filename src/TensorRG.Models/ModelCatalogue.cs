@@ -54,6 +54,6 @@ public static class ModelCatalogue
     {
         using Stream stream = typeof(ModelCatalogue).Assembly.GetManifestResourceStream(Folder + name + Extension)!;
         using var reader = new StreamReader(stream);
-        return ModelFile.Parse(reader.ReadToEnd(), Folder + name + Extension);
+        return ModelFile.Trust(reader.ReadToEnd(), Folder + name + Extension);
     }
 }

@@ -23,13 +23,19 @@ public sealed class BadInputTests : IDisposable
         // Models.
         { "run", "'model'", "tensorrg run --help" },
         { "run isng", "'isng'", "Did you mean 'ising'?" },
-        { "run xyzzy", "'xyzzy'", "ising, potts, clock, six-vertex" },
+        { "run xyzzy", "'xyzzy'", "potts, potts-triangular, six-vertex, spin-1" },
         { "run ''", "empty", "Give a name" },
         { "run ising potts", "'potts'", "one model" },
         { "converge", "'model'", "tensorrg converge --help" },
         { "converge poots", "'poots'", "Did you mean 'potts'?" },
         { "models isng", "'isng'", "Did you mean 'ising'?" },
         { "models ising potts", "'potts'", "one name" },
+        { "models --set h=1", "--set", "models NAME --set" },
+        { "models --file", "--file", "Name it" },
+        { "models ising --file --json", "--file", "Give one of them" },
+        { "models ising --file --set h=1", "--file", "Give one of them" },
+        { "models ising --form triangles", "triangles form", "'auto'" },
+        { "models ising --set H0=1", "'H0'", "It has: temperature" },
 
         // Options.
         { "run ising --bond-dimensionn 8", "'--bond-dimensionn'", "Did you mean '--bond-dimension'?" },
@@ -84,7 +90,7 @@ public sealed class BadInputTests : IDisposable
         // Parameters.
         { "run ising --set h", "'h'", "NAME=VALUE" },
         { "run ising --set =1", "'=1'", "NAME=VALUE" },
-        { "run ising --set h=", "--set h", "finite number" },
+        { "run ising --set h=", "'h'", "finite number" },
         { "run ising --set h=NaN", "'NaN'", "finite number" },
         { "run ising --set h=0,1", "'0,1'", "point, not a comma" },
         { "run ising --set h=1=2", "'1=2'", "finite number" },
@@ -194,13 +200,32 @@ public sealed class BadInputTests : IDisposable
 
     [Theory]
     [MemberData(nameof(CommandLines))]
-    public void Bad_command_line(string line, string named, string remedy) => AssertRefused(Words(line), null, named, remedy);
+    public void Bad_command_line(string line, string named, string remedy)
+        => AssertRefused(() => InProcess.Run(_folder.Path, Words(line)), named, remedy);
+
+    /// <summary>A process of its own says the same as the entry point called from here, and ends with the same code.</summary>
+    [Theory]
+    [InlineData("", "command is missing", "run, resume, converge, models")]
+    [InlineData("run ising --tempreature 2", "'--tempreature'", "Did you mean '--temperature'?")]
+    [InlineData("models isng", "'isng'", "Did you mean 'ising'?")]
+    [InlineData("measure ising --observables enrgy", "'enrgy'", "energy")]
+    [InlineData("sweep ising --over h=0:1", "'h=0:1'", "NAME=FROM:TO:COUNT")]
+    [InlineData("resume nowhere", "nowhere", "Check the path")]
+    [InlineData("run ising --run file", "is a file", "Give a folder")]
+    public void Bad_command_line_in_a_process(string line, string named, string remedy)
+    {
+        AssertRefused(() => CommandLineProcess.Run(_folder.Path, Words(line)), named, remedy);
+        Assert.Equal(CommandLineProcess.Run(_folder.Path, Words(line)).Error, InProcess.Run(_folder.Path, Words(line)).Error);
+    }
 
     [Theory]
     [InlineData("run ising")]
     [InlineData("converge ising")]
     public void Unknown_instruction_path_in_the_environment(string line)
-        => AssertRefused(Words(line), new() { ["TENSORRG_SIMD"] = "sse9" }, "TENSORRG_SIMD=sse9", "use avx512, avx2 or portable");
+    {
+        using CommandLineProcess process = CommandLineProcess.Start(_folder.Path, Words(line), new Dictionary<string, string> { ["TENSORRG_SIMD"] = "sse9" });
+        AssertRefused(process.End, "TENSORRG_SIMD=sse9", "use avx512, avx2 or portable");
+    }
 
     [Fact]
     public void Bad_input_names_all_bad_options()
@@ -254,11 +279,10 @@ public sealed class BadInputTests : IDisposable
         return [.. parts.SelectMany((part, i) => i % 2 == 1 ? [part] : part.Split(' ', StringSplitOptions.RemoveEmptyEntries))];
     }
 
-    private void AssertRefused(string[] args, Dictionary<string, string>? environment, string named, string remedy)
+    private void AssertRefused(Func<ProcessOutcome> run, string named, string remedy)
     {
         File.WriteAllText(_folder.Sub("file"), "");
-        using CommandLineProcess process = CommandLineProcess.Start(_folder.Path, args, environment);
-        ProcessOutcome refused = process.End().Expect(2).ExpectError(named, remedy);
+        ProcessOutcome refused = run().Expect(2).ExpectError(named, remedy);
         Assert.True(refused.Out.Length == 0, $"Standard output must stay empty.\n{refused}");
         string[] lines = [.. refused.ErrorLines.Where(static l => !l.StartsWith("See: tensorrg ", StringComparison.Ordinal))];
         Assert.True(lines.Length == 1, $"One message is wanted.\n{refused}");

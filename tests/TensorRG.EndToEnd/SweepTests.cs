@@ -11,7 +11,7 @@ public sealed class SweepTests : IDisposable
     private const int PointCount = 24;
 
     private static readonly string[] Command =
-        ["sweep", "ising", "--over", "temperature=2:2.575:24", "--observables", "ln-z,free-energy", "--bond-dimension", "10", "--threads", "2", "--into"];
+        ["sweep", "ising", "--over", "temperature=2.6:3.75:24", "--observables", "ln-z,free-energy", "--bond-dimension", "4", "--threads", "2", "--into"];
 
     private readonly TemporaryFolder _folder = new();
 
@@ -33,7 +33,7 @@ public sealed class SweepTests : IDisposable
         for (int i = 0; i < PointCount; i++)
         {
             string[] cells = lines[i + 1].Split(',');
-            Assert.Equal((2 + (0.025 * i)).ToString("0.###", CultureInfo.InvariantCulture), cells[0]);
+            Assert.Equal((2.6 + (0.05 * i)).ToString("0.##", CultureInfo.InvariantCulture), cells[0]);
             Assert.Equal((double)points[i]!["values"]![0]!["value"]!, double.Parse(cells[4], CultureInfo.InvariantCulture));
             Assert.True((bool)points[i]!["values"]![0]!["exact"]!["insideErrorBar"]!);
         }

@@ -1,6 +1,6 @@
 using System.CommandLine;
 using System.Text.Json.Nodes;
-using Spectre.Console;
+using TensorRG.Cli.Explanations;
 using TensorRG.Cli.Input;
 using TensorRG.Cli.Output;
 using TensorRG.Models;
@@ -13,84 +13,55 @@ internal static class ModelsCommand
 {
     public static Command Create()
     {
-        var command = new Command("models", "List the models, or explain one: parameters, symmetry, exact references.");
-        Argument<string?> name = TextInput.Optional("name", "Name of a model.");
+        var command = new Command("models", "List the models, or explain one: states, energies, symmetry, network, parameters, observables, exact references.");
+        Argument<string?> name = TextInput.Optional("name", ModelSource.Help + " None: the list.");
+        var options = new ModelOptions();
+        Option<string> form = ChoiceOption.OneOf("--form", "Form of the network to explain.", "auto", NetworkForms.Names);
+        Option<bool> file = new("--file") { Description = "Print the text of the model file and nothing else: a start for your own." };
         Option<bool> json = new("--json") { Description = "Print one JSON object and nothing else." };
         command.Arguments.Add(name);
-        command.Options.Add(json);
+        foreach (Option option in (Option[])[options.Temperature, options.Set, form, file, json])
+            command.Options.Add(option);
         command.SetAction(result =>
         {
-            IReadOnlyList<Model> models = result.GetValue(name) is { } one ? [ModelCatalogue.Find(one)] : ModelCatalogue.All;
-            if (result.GetValue(json))
-                Console.Out.Write(JsonText.Write(JsonText.Ordered(("models", new JsonArray([.. models.Select(ModelJson)])))));
-            else if (result.GetValue(name) is null)
-                List(models);
-            else
-                Explain(models[0]);
+            Refuse(result, result.GetValue(name), [options.Temperature, options.Set, form, file], file, json);
+            Console.Out.Write(result.GetValue(name) switch
+            {
+                null => List(result.GetValue(json)),
+                { } one when result.GetValue(file) => ModelSource.Find(one).Definition,
+                { } one => Explain(
+                    ModelExplanation.Of(one, options.Read(result, one).Parameters(), NetworkForms.Read(result.GetRequiredValue(form))), result.GetValue(json)),
+            });
             return ExitCode.Done;
         });
         return command;
     }
 
-    private static void List(IReadOnlyList<Model> models)
+    private static void Refuse(ParseResult result, string? name, Option[] ofOne, Option file, Option json)
     {
-        var grid = new Grid().AddColumn(new GridColumn().NoWrap().PadRight(3)).AddColumn(new GridColumn().NoWrap().PadRight(3)).AddColumn();
-        foreach (Model model in models)
-            grid.AddRow(new Text(model.Name), new Text(model.Title), new Text(string.Join(", ", model.Parameters.Select(static p => p.Name))));
-        Consoles.Out.Write(grid);
-        Consoles.Out.WriteLine("Explain one with: tensorrg models NAME");
+        if (name is null && ofOne.FirstOrDefault(o => IsGiven(result, o)) is { } given)
+            throw new UsageException($"{given.Name} goes with one model. Name it: tensorrg models NAME {given.Name}");
+        if (!IsGiven(result, file))
+            return;
+        if (ofOne.Append(json).FirstOrDefault(o => o != file && IsGiven(result, o)) is { } other)
+            throw new UsageException($"--file prints the text of the model file alone, and {other.Name} has no say in it. Give one of them.");
     }
 
-    private static void Explain(Model model)
+    private static bool IsGiven(ParseResult result, Option option) => result.GetResult(option) is { Implicit: false };
+
+    private static string List(bool json)
     {
-        IAnsiConsole console = Consoles.Out;
-        console.WriteLine(model.Title);
-        console.WriteLine();
-        console.Write(new Text(model.Description + "\n\n"));
-        var facts = new Grid().AddColumn(new GridColumn().NoWrap().PadRight(3)).AddColumn();
-        facts.AddRow(new Text("lattice"), new Text(FormattableString.Invariant($"{model.Lattice}, {model.SitesPerVertex} site(s) per network vertex")));
-        facts.AddRow(new Text("symmetry"), new Text(model.Symmetry));
-        console.Write(facts);
-        console.WriteLine();
-        TableView.Write(console, ParameterTable(model));
-        foreach (ParameterShorthand shorthand in model.Shorthands)
-            console.WriteLine($"{shorthand.Name} sets {string.Join(" and ", shorthand.Targets)}: {shorthand.Meaning}");
-        console.WriteLine("Exact references");
-        TableView.Write(console, ReferenceTable(model));
+        IReadOnlyList<Model> models = ModelCatalogue.All;
+        if (json)
+            return JsonText.Write(JsonText.Ordered(("models", new JsonArray([.. models.Select(static m => JsonText.Ordered(("name", m.Name), ("title", m.Title), ("parameters", ExplanationJson.Definitions(m))))]))));
+        var page = new Page();
+        page.Table(["name", "parameters", "title"], models.Select(static m => (string[])[m.Name, string.Join(", ", m.Parameters.Select(static p => p.Symbol)), m.Title]));
+        page.Line();
+        page.Line("Explain one with: tensorrg models NAME");
+        page.Line("A model of your own: tensorrg models ising --file > mine.toml, edit it, tensorrg run mine.toml");
+        return page.ToString();
     }
 
-    private static DataTable ParameterTable(Model model)
-    {
-        var table = new DataTable(
-            new Reports.TableColumn("name", ColumnKind.Text) { Title = "parameter" },
-            new Reports.TableColumn("symbol", ColumnKind.Text),
-            new Reports.TableColumn("default", ColumnKind.Text),
-            new Reports.TableColumn("unit", ColumnKind.Text),
-            new Reports.TableColumn("range", ColumnKind.Text),
-            new Reports.TableColumn("meaning", ColumnKind.Text));
-        foreach (ParameterDefinition p in model.Parameters)
-            table.AddRow(p.Name, p.Symbol, p.DefaultText, p.Unit, p.RangeText, p.Meaning);
-        return table;
-    }
-
-    private static DataTable ReferenceTable(Model model)
-    {
-        var table = new DataTable(
-            new Reports.TableColumn("quantity", ColumnKind.Text),
-            new Reports.TableColumn("validity", ColumnKind.Text) { Title = "where" },
-            new Reports.TableColumn("source", ColumnKind.Text));
-        foreach (ExactReference reference in model.ExactReferences)
-            table.AddRow(QuantityNames.Words(reference.Quantity), reference.Validity, reference.Source);
-        return table;
-    }
-
-    private static JsonObject ModelJson(Model model) => JsonText.Ordered(
-        ("name", model.Name),
-        ("title", model.Title),
-        ("description", model.Description),
-        ("lattice", model.Lattice),
-        ("sitesPerVertex", model.SitesPerVertex),
-        ("symmetry", model.Symmetry),
-        ("parameters", ParameterTable(model).ToJson()),
-        ("exactReferences", ReferenceTable(model).ToJson()));
+    private static string Explain(ModelExplanation explanation, bool json)
+        => json ? JsonText.Write(ExplanationJson.Of(explanation)) : ExplanationText.Of(explanation);
 }

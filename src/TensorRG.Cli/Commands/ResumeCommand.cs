@@ -17,7 +17,7 @@ internal static class ResumeCommand
         Argument<string> folder = TextInput.Required("dir", "Folder of the run or sweep.");
         Option<int> threads = new MachineOptions().Threads;
         (Option<bool> json, Option<bool> quiet) = OutputOptions.Create();
-        Option<bool> plot = OutputOptions.Plot();
+        Option<bool> plot = OutputOptions.Plot(" A sweep draws its figure with or without.");
         command.Arguments.Add(folder);
         foreach (Option option in (Option[])[threads, plot, json, quiet])
             command.Options.Add(option);

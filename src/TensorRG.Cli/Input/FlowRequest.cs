@@ -50,8 +50,11 @@ internal sealed record FlowRequest
     }
 
     /// <summary>The inputs of the run at one bond dimension.</summary>
+    /// <exception cref="ModelException">The model has no network in this form, or one that does not fit in memory.</exception>
     public RunInputs Inputs(int bondDimension)
     {
+        // Before a folder is made: a form that does not hold the terms, a tensor that does not fit.
+        _ = Parameters.Model.Plan(Parameters, Form);
         var cut = new CutRule(bondDimension, CutsAnywhere ? 0 : CutRule.DefaultMultipletGap);
         var settings = new SchemeSettings(cut) { BondExponent = BondExponent, Decomposition = Decomposition, Seed = Seed };
         return FlowFactory.Describe(Parameters, Scheme, settings, Steps, IsGraded, Backend, Form);

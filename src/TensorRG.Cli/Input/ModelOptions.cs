@@ -19,6 +19,9 @@ internal sealed class ModelOptions
         HelpName = "NAME=VALUE",
     };
 
-    public ParameterRequest Read(ParseResult result)
-        => ParameterRequest.Create(ModelSource.Find(result.GetRequiredValue(Model)), result.GetValue(Temperature), result.GetValue(Set) ?? []);
+    public ParameterRequest Read(ParseResult result) => Read(result, result.GetRequiredValue(Model));
+
+    /// <summary>Reads the options for a model that is named elsewhere.</summary>
+    public ParameterRequest Read(ParseResult result, string model)
+        => ParameterRequest.Create(ModelSource.Find(model), result.GetValue(Temperature), result.GetValue(Set) ?? []);
 }

@@ -11,7 +11,20 @@ internal static class ModelSource
 
     /// <summary>The model of a name or of a file.</summary>
     /// <exception cref="ModelException">There is none, or the file is not right.</exception>
-    public static Model Find(string nameOrPath) => IsPath(nameOrPath) ? ModelFile.Load(nameOrPath) : ModelCatalogue.Find(nameOrPath);
+    public static Model Find(string nameOrPath)
+    {
+        if (!IsPath(nameOrPath))
+            return ModelCatalogue.Find(nameOrPath);
+        if (!Path.Exists(nameOrPath) && BuiltIn(nameOrPath) is { } name)
+            throw new UsageException($"{nameOrPath}: There is no such file, but a built-in model '{name}': name it without folder and .toml, or write its file first: tensorrg models {name} --file > {nameOrPath}");
+        return ModelFile.Load(nameOrPath);
+    }
+
+    private static string? BuiltIn(string path)
+    {
+        string stem = Path.GetFileNameWithoutExtension(path);
+        return ModelCatalogue.Names.FirstOrDefault(n => string.Equals(n, stem, StringComparison.OrdinalIgnoreCase));
+    }
 
     private static bool IsPath(string text)
         => text.EndsWith(".toml", StringComparison.OrdinalIgnoreCase)

@@ -10,9 +10,10 @@ internal static class OutputOptions
         new Option<bool>("--json") { Description = "Print one JSON object and nothing else." },
         new Option<bool>("--quiet", "-q") { Description = "Print the summary alone, without the table of steps." });
 
-    public static Option<bool> Plot() => new("--plot")
+    /// <param name="remark">What else is to say of the option.</param>
+    public static Option<bool> Plot(string remark = "") => new("--plot")
     {
-        Description = "Also draw X and the transfer-matrix levels against the length: flow.svg and flow.png in the run's folder.",
+        Description = "Also draw X and the transfer-matrix levels against the length: flow.svg and flow.png in the run's folder." + remark,
     };
 
     /// <exception cref="UsageException">Both are given.</exception>

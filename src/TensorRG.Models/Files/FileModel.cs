@@ -10,11 +10,13 @@ public sealed class FileModel : Model
     private readonly ModelContent content;
     private readonly Lazy<string> symmetry;
 
-    internal FileModel(SourceText source)
+    /// <param name="source">The text.</param>
+    /// <param name="isChecked">True for a file that is known to be right: its tables are not filled before they are needed.</param>
+    internal FileModel(SourceText source, bool isChecked = false)
     {
         content = ContentReader.Read(source);
         Definition = source.Text;
-        symmetry = new(() => Builder(CreateParameters()).Symmetry);
+        symmetry = new(() => Plan(CreateParameters()).Symmetry);
         Parameters = [.. content.Globals.Parameters.SelectMany(p => p.Definitions)];
         Shorthands =
         [
@@ -27,10 +29,12 @@ public sealed class FileModel : Model
             .. content.Solution?.References ?? [],
             .. content.References.Select(r => new ExactReference(r.Quantity, r.Validity, r.Source)),
         ];
-        CheckSolution();
+        if (!isChecked)
+            CheckSolution();
         if (HasTemperature && (content.Critical is not null || content.Solution is not null))
             Parameters = [.. Parameters.Select(p => p.Name == ParameterDefinition.TemperatureName ? p with { DefaultsToCritical = true } : p)];
-        SystemBuilder.Build(content, CreateParameters());
+        if (!isChecked)
+            SystemBuilder.Build(content, CreateParameters());
     }
 
     /// <inheritdoc/>
@@ -108,6 +112,28 @@ public sealed class FileModel : Model
         Workspace work = new(content.Globals, parameters);
         return content.References.Where(r => r.Quantity == quantity).Select(r => r.At(work)).FirstOrDefault(v => v is not null);
     }
+
+    /// <inheritdoc/>
+    protected override NetworkPlan FindPlan(ParameterSet parameters, NetworkForm form)
+    {
+        NetworkPlan plan = NetworkBuilder.Plan(SystemBuilder.Build(content, parameters), form == NetworkForm.Auto ? content.Form : form);
+        if (form != NetworkForm.Auto)
+            return plan;
+        if (content.Form != NetworkForm.Auto)
+            plan = plan with { Choice = $"The model file asks for the {content.Form.ToString().ToLowerInvariant()} form." };
+        return content.Solution?.Network(parameters) is { } own ? Of(own, plan) : plan;
+    }
+
+    // Made by hand, the network may leave out part of the symmetry that tables show.
+    private static NetworkPlan Of(VertexNetwork own, NetworkPlan plan) => plan with
+    {
+        Symmetry = own.GroupOrders.SequenceEqual(plan.GroupOrders) ? plan.Symmetry : own.GroupOrders.IsEmpty ? "none" : string.Join("; ", own.GroupOrders.Select(n => n == 0 ? "U(1)" : FormattableString.Invariant($"Z{n}"))),
+        GroupOrders = own.GroupOrders,
+        VerticalBond = own.VerticalBond,
+        HorizontalBond = own.HorizontalBond,
+        IsReal = own.IsReal,
+        IsFromSolution = true,
+    };
 
     private ModelNetwork Builder(ParameterSet parameters)
         => NetworkBuilder.Build(SystemBuilder.Build(content, parameters), new NetworkOptions { Form = content.Form });

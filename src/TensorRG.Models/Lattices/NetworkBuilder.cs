@@ -3,6 +3,7 @@ using System.Globalization;
 using System.Numerics;
 using TensorRG.Models.Lattices.Bonds;
 using TensorRG.Models.Lattices.Forms;
+using TensorRG.Models.Lattices.Symmetries;
 
 namespace TensorRG.Models.Lattices;
 
@@ -33,6 +34,31 @@ public static class NetworkBuilder
             ? new ModelNetwork(network, impurities, form.Form, why, graded.Symmetry)
             : new ModelNetwork(network.Ungraded(), impurities, form.Form, why, "none");
     }
+
+    /// <summary>What <see cref="Build"/> would build, without the elements.</summary>
+    /// <param name="system">The model with all numbers filled in.</param>
+    /// <param name="form">The form asked for.</param>
+    /// <exception cref="ModelException">As for <see cref="Build"/>.</exception>
+    public static NetworkPlan Plan(LatticeSystem system, NetworkForm form = NetworkForm.Auto)
+    {
+        ArgumentNullException.ThrowIfNull(system);
+        var terms = new VertexTerms(system, new NetworkOptions { Form = form });
+        (VertexForm chosen, string why) = FormChoice.Choose(system, form, terms.Used);
+        GradedVertex graded = Grading.Find(new RawVertex(chosen, terms), chosen, terms);
+        Cells.RequireSize(graded.Vertical, graded.Horizontal, terms.NeedsBlock);
+        return new NetworkPlan(
+            chosen.Form, why, [.. FormChoice.Others(system, chosen.Form, terms.Used)], graded.Symmetry, graded.Orders, States(graded.Vertical.Charges), States(graded.Horizontal.Charges), terms.IsReal)
+        {
+            SitesPerVertex = chosen.Sites,
+            Breaking = Breaking(system, graded),
+        };
+    }
+
+    // On edges every observable is a function of the legs, so that it keeps what the vertex conserves.
+    private static ImmutableHashSet<string>? Breaking(LatticeSystem system, GradedVertex graded)
+        => graded.Permutations.IsEmpty && !graded.Orders.IsEmpty && !system.OnEdges
+            ? null
+            : [.. system.Observables.Where(o => graded.Permutations.Any(p => ObservableSymmetry.Breaks(o, p))).Select(static o => o.Name)];
 
     private static VertexNetwork Network(Cells cells, GradedVertex graded, VertexForm form, VertexTerms terms, RawVertex raw, out double scale)
     {

@@ -8,8 +8,8 @@ namespace TensorRG.EndToEnd.Harness;
 /// <param name="StepCount">Steps.</param>
 internal sealed record RunSetup(string Scheme, int BondDimension, int StepCount)
 {
-    /// <summary>A run that takes seconds: long enough to be interrupted anywhere.</summary>
-    public static RunSetup Long(string scheme) => scheme == "hotrg" ? new(scheme, 13, 28) : new(scheme, 20, 28);
+    /// <summary>A run that takes a second or two: long enough to be interrupted anywhere.</summary>
+    public static RunSetup Long(string scheme) => scheme == "hotrg" ? new(scheme, 12, 24) : new(scheme, 16, 24);
 
     /// <summary>A run that takes a second or less.</summary>
     public static RunSetup Short(string scheme) => new(scheme, 6, 8);

@@ -20,12 +20,22 @@ internal sealed class Cells
         this.terms = terms;
         this.vertical = vertical;
         this.horizontal = horizontal;
+        RequireSize(vertical, horizontal, terms.NeedsBlock);
+        dense = new DenseVertex(raw, vertical, horizontal);
+    }
+
+    /// <summary>Checks that the tensor fits.</summary>
+    /// <param name="vertical">Basis of u and d.</param>
+    /// <param name="horizontal">Basis of l and r.</param>
+    /// <param name="needsBlock">True for a block of 2 x 2 cells.</param>
+    /// <exception cref="ModelException">It does not.</exception>
+    public static void RequireSize(LegBasis vertical, LegBasis horizontal, bool needsBlock)
+    {
         double elements = Math.Pow((double)vertical.Size * horizontal.Size, 2);
         if (elements > FormChoice.MaxElements)
             throw FormChoice.TooLarge("The network's tensor", elements, "use fewer states, or another form");
-        if (terms.NeedsBlock && elements * elements > FormChoice.MaxElements)
+        if (needsBlock && elements * elements > FormChoice.MaxElements)
             throw FormChoice.TooLarge("The tensor of a block of 2 x 2 cells, which an alternating sign takes,", elements * elements, "use fewer states, or leave out the staggered quantity");
-        dense = new DenseVertex(raw, vertical, horizontal);
     }
 
     /// <summary>Charges of the states of the legs u and d of a cell.</summary>

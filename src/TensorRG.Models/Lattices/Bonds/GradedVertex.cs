@@ -7,4 +7,8 @@ namespace TensorRG.Models.Lattices.Bonds;
 /// <param name="Horizontal">Basis of l and r.</param>
 /// <param name="Orders">Orders of the group's factors, 0 for U(1).</param>
 /// <param name="Symmetry">The group in words.</param>
-internal sealed record GradedVertex(LegBasis Vertical, LegBasis Horizontal, ImmutableArray<int> Orders, string Symmetry);
+internal sealed record GradedVertex(LegBasis Vertical, LegBasis Horizontal, ImmutableArray<int> Orders, string Symmetry)
+{
+    /// <summary>Where the group permutes the states of a variable, its generators: element s is the state that s goes to.</summary>
+    public ImmutableArray<int[]> Permutations { get; init; } = [];
+}

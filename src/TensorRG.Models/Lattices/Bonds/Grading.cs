@@ -30,7 +30,7 @@ internal static class Grading
         (LegBasis vertical, LegBasis horizontal) = bases.Find(group);
         return group.IsTrivial && form.Form is NetworkForm.Bond or NetworkForm.Triangles
             ? OfElements(new GradedVertex(vertical, horizontal, [], "none"), raw, terms)
-            : new GradedVertex(vertical, horizontal, [.. group.Orders], GroupText.Of(group, terms.System.StateLabels));
+            : new GradedVertex(vertical, horizontal, [.. group.Orders], GroupText.Of(group, terms.System.StateLabels)) { Permutations = [.. group.Generators] };
     }
 
     private static StateGroup Permutations(VertexTerms terms)

@@ -28,6 +28,16 @@ internal static class FormChoice
         return (found, why);
     }
 
+    /// <summary>The other forms that hold the terms and surely fit, in the order of <see cref="NetworkForm"/>.</summary>
+    /// <param name="system">The system.</param>
+    /// <param name="chosen">The form that is not listed.</param>
+    /// <param name="used">Clusters of all terms that must be held.</param>
+    public static IEnumerable<NetworkForm> Others(LatticeSystem system, NetworkForm chosen, IReadOnlyCollection<Cluster> used)
+        => Enum.GetValues<NetworkForm>().Where(form => form != NetworkForm.Auto && form != chosen
+            && FormCatalogue.Find(system.Lattice, system.OnEdges, form) is { } found
+            && used.All(c => found.Placements.Any(p => p.Cluster == c))
+            && Math.Pow(system.States, Math.Max(found.Variables, 2 * (found.Up.Length + found.Left.Length))) <= MaxElements);
+
     /// <summary>An exception for what does not fit in memory.</summary>
     /// <param name="what">What does not fit.</param>
     /// <param name="elements">Its number of elements of 16 bytes.</param>
