@@ -6,7 +6,7 @@ namespace TensorRG.EndToEnd;
 
 /// <summary>
 /// Runs every <c>console</c> example of README.md, in order and in one folder, and compares what it prints, times and
-/// processor apart. With the environment variable TENSORRG_WRITE_README=1 the output is written into the file instead.
+/// processor apart; model files that it shows are saved first. With the environment variable TENSORRG_WRITE_README=1 the output is written into the file instead.
 /// </summary>
 public sealed partial class ReadmeTests
 {
@@ -29,7 +29,7 @@ public sealed partial class ReadmeTests
     public void The_examples_cover_every_command()
     {
         string shown = File.ReadAllText(Path.Combine(Repository.Root, "README.md"));
-        foreach (string command in (string[])["run", "resume", "converge", "models"])
+        foreach (string command in (string[])["run", "resume", "converge", "models", "measure", "sweep"])
             Assert.Contains($"\n{Prompt}{command}", shown, StringComparison.Ordinal);
     }
 
@@ -38,6 +38,7 @@ public sealed partial class ReadmeTests
         using var folder = new TemporaryFolder();
         var text = new StringBuilder();
         bool inExample = false;
+        WriteModels(folder, readme);
         foreach (string line in readme.TrimEnd('\n').Split('\n'))
         {
             if (line.StartsWith(Fence, StringComparison.Ordinal))
@@ -49,6 +50,13 @@ public sealed partial class ReadmeTests
         }
 
         return text.ToString();
+    }
+
+    /// <summary>Model files that the examples use: blocks of toml, saved under the name that they give the model.</summary>
+    private static void WriteModels(TemporaryFolder folder, string readme)
+    {
+        foreach (Match block in ModelFile().Matches(readme))
+            File.WriteAllText(Path.Combine(folder.Path, block.Groups[2].Value + ".toml"), block.Groups[1].Value);
     }
 
     private static string Output(TemporaryFolder folder, string arguments)
@@ -84,6 +92,9 @@ public sealed partial class ReadmeTests
 
     [GeneratedRegex("(\"(seconds|threads|backendDescription)\":) [^\n]*")]
     private static partial Regex JsonMachine();
+
+    [GeneratedRegex("```toml\n(name = \"([a-z0-9-]+)\"\n.*?)```", RegexOptions.Singleline)]
+    private static partial Regex ModelFile();
 
     [GeneratedRegex(" +")]
     private static partial Regex Spaces();
