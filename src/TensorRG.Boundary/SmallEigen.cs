@@ -10,6 +10,9 @@ internal static class SmallEigen
     /// <summary>Eigenvalues count as equal in magnitude within this fraction; the one with the larger real part is then taken.</summary>
     private const double Tie = 1e-7;
 
+    private const double Shift = 1e-15;
+    private const int Attempts = 6;
+
     /// <summary>The eigenvalue of largest magnitude with its eigenvector of norm 1, of the leading n x n part.</summary>
     /// <exception cref="DecompositionException">No convergence.</exception>
     public static (Complex Value, Complex[] Vector) Dominant(Complex[,] matrix, int n, bool isReal)
@@ -38,7 +41,7 @@ internal static class SmallEigen
 
     private static (Complex[] Values, Func<int, Complex[]> Vector) OfReal(Complex[,] matrix, int n)
     {
-        var evd = Guarded(() => Matrix<double>.Build.Dense(n, n, (i, j) => matrix[i, j].Real).Evd(Symmetricity.Asymmetric));
+        var evd = Guarded(shift => Matrix<double>.Build.Dense(n, n, (i, j) => matrix[i, j].Real + (i == j ? i * shift : 0)).Evd(Symmetricity.Asymmetric), Size(matrix, n));
         Complex[] values = [.. evd.EigenValues];
         Matrix<double> v = evd.EigenVectors;
         return (values, Column);
@@ -54,19 +57,30 @@ internal static class SmallEigen
 
     private static (Complex[] Values, Func<int, Complex[]> Vector) OfComplex(Complex[,] matrix, int n)
     {
-        var evd = Guarded(() => Matrix<Complex>.Build.Dense(n, n, (i, j) => matrix[i, j]).Evd(Symmetricity.Asymmetric));
+        var evd = Guarded(shift => Matrix<Complex>.Build.Dense(n, n, (i, j) => matrix[i, j] + (i == j ? i * shift : 0)).Evd(Symmetricity.Asymmetric), Size(matrix, n));
         return ([.. evd.EigenValues], j => [.. evd.EigenVectors.Column(j)]);
     }
 
-    private static E Guarded<E>(Func<E> evd)
+    private static double Size(Complex[,] matrix, int n)
+        => Enumerable.Range(0, n).Max(i => Enumerable.Range(0, n).Max(j => matrix[i, j].Magnitude));
+
+    /// <summary>The library's iteration now and then circles on a matrix; the next of a few shifts of the diagonal by round-off sets it free.</summary>
+    private static E Guarded<E>(Func<double, E> evd, double size)
     {
-        try
+        for (int attempt = 0; ; attempt++)
         {
-            return evd();
-        }
-        catch (MathNet.Numerics.NonConvergenceException e)
-        {
-            throw new DecompositionException("The small eigenvalue problem of a boundary iteration did not converge.", e);
+            try
+            {
+                return evd(attempt * Shift * size);
+            }
+            catch (MathNet.Numerics.NonConvergenceException e) when (attempt == Attempts)
+            {
+                throw new DecompositionException("The small eigenvalue problem of a boundary iteration did not converge.", e);
+            }
+            catch (MathNet.Numerics.NonConvergenceException)
+            {
+                // The next shift.
+            }
         }
     }
 }

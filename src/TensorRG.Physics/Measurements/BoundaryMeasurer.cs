@@ -20,7 +20,10 @@ internal sealed class BoundaryMeasurer(Backend backend) : IMeasurer
         ImmutableArray<QuantityRequest> requests = QuantityCatalogue.Read(inputs);
         LatticeSystem system = QuantityCatalogue.SystemOf(inputs.Parameters);
         var plan = new BranchPlan(system, inputs, requests);
+        Estimate second = FlowCheck.LogZ(plan.Symmetric.Model.Network, backend);
         BranchReading symmetric = Read(plan.Symmetric);
+        if ((symmetric.Disagreement > 0 || symmetric.LogZ.Error > second.Error) && inputs.Form == NetworkForm.Auto && plan.Symmetric.Model.Form == NetworkForm.Row)
+            return Measure(inputs with { Form = NetworkForm.Face }, progress, stop); // Rows that are far from symmetric can lead astray.
         BranchReading[] ordered = [.. Ordered(plan)];
         ImmutableArray<Measured> values = [.. requests.Select(r => Assemble(r, inputs.Parameters, ordered.FirstOrDefault(o => o.Has(r)) ?? symmetric))];
         return new Measurement(values, [.. plan.Remarks, .. ordered.Select(o => o.OrderRemark(symmetric))]);
@@ -28,7 +31,8 @@ internal sealed class BoundaryMeasurer(Backend backend) : IMeasurer
         BranchReading Read(Branch branch)
         {
             progress?.Report($"boundary fixed points, {(branch.IsOrdered ? "ordered" : "symmetric")} state");
-            return new BranchReading(branch.Names, branch.IsOrdered, branch.IsReal ? Run<double>(branch, inputs, stop) : Run<Complex>(branch, inputs, stop));
+            var reading = new BranchReading(branch.Names, branch.IsOrdered, branch.IsReal ? Run<double>(branch, inputs, stop) : Run<Complex>(branch, inputs, stop));
+            return reading with { Disagreement = FlowCheck.Disagreement(reading.LogZ, second) };
         }
 
         IEnumerable<BranchReading> Ordered(BranchPlan p)
@@ -50,7 +54,7 @@ internal sealed class BoundaryMeasurer(Backend backend) : IMeasurer
     private static Measured Assemble(QuantityRequest request, ParameterSet parameters, BranchReading reading)
     {
         (Estimate value, double imaginary) = reading.Value(request);
-        string doubt = BranchReading.Doubt(value);
+        string doubt = reading.Doubt(value);
         return new Measured(request.Name, request.Meaning, request.Unit, value, imaginary, doubt.Length == 0, doubt, ExactQuantities.Of(request, parameters));
     }
 }

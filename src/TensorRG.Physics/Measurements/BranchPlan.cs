@@ -1,4 +1,5 @@
 using System.Collections.Immutable;
+using TensorRG.Models.Files;
 using TensorRG.Models.Lattices;
 
 namespace TensorRG.Physics.Measurements;
@@ -50,14 +51,17 @@ internal sealed class BranchPlan
     /// <summary>The network without charges in blocks of 2 x 2 cells, for a uniform order that the plain network cannot hold.</summary>
     public Branch UniformInBlocks() => Create(Uniform!.Names, isOrdered: true, inBlocks: true);
 
+    /// <summary>The form asked for, else that of the model's file.</summary>
+    private NetworkForm Form => _inputs.Form == NetworkForm.Auto && _inputs.Parameters.Model is FileModel file ? file.Form : _inputs.Form;
+
     private bool Alternates(LocalObservable observable) => observable.IsStaggered && _system.Lattice != LatticeKind.Honeycomb;
 
     private Branch Create(ImmutableArray<string> names, bool isOrdered, bool inBlocks = false)
     {
-        var options = new NetworkOptions { Form = _inputs.Form, Graded = !isOrdered, Observables = names, InBlocks = inBlocks };
+        var options = new NetworkOptions { Form = Form, Graded = !isOrdered, Observables = names, InBlocks = inBlocks };
         int[] variances = [.. Enumerable.Range(0, names.Length).Where(i => _requests.Any(r => r.Kind == QuantityKind.Variance && r.Observable!.Name == names[i]))];
         ModelNetwork network = NetworkBuilder.Build(_system, options);
-        if (_inputs.Form == NetworkForm.Auto && network.Form == NetworkForm.Face)
+        if (Form == NetworkForm.Auto && network.Form == NetworkForm.Face)
             network = NetworkBuilder.Build(_system, options with { Form = NetworkForm.Row }) with { Choice = RowChoice };
         return new Branch(network, names, isOrdered, [.. variances]);
     }

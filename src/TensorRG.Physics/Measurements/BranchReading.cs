@@ -14,6 +14,9 @@ internal sealed record BranchReading(ImmutableArray<string> Names, bool IsOrdere
     /// <summary>Power of w for what hardly settles: an order parameter of dimension 1/8, a specific heat that diverges as a logarithm.</summary>
     private const double DivergentPower = 1.0 / 16;
 
+    /// <summary>Bar over the estimated error of a derivative, whose extrapolations are not independent.</summary>
+    private const double DerivativeSafety = 5;
+
     /// <summary>Fall of the smallest weight over a doubling of chi that no critical state shows; there it is some chi^-4.</summary>
     private const double Resolved = 0.01;
 
@@ -25,14 +28,19 @@ internal sealed record BranchReading(ImmutableArray<string> Names, bool IsOrdere
     /// </summary>
     public bool Alternates => Points.All(static p => !p.IsConverged) && Points[^1].Residual > 1e-3;
 
+    /// <summary>Distance of ln Z from that of a second method where their bars do not explain it; else 0.</summary>
+    public double Disagreement { get; init; }
+
     /// <summary>Whether a requested quantity is read from this branch.</summary>
     /// <param name="request">What was asked for.</param>
     public bool Has(QuantityRequest request) => request.Observable is { } o && Names.Contains(o.Name);
 
     /// <summary>Why a value does not carry its bar; empty if it does.</summary>
     /// <param name="value">The value.</param>
-    public static string Doubt(Estimate value)
+    public string Doubt(Estimate value)
     {
+        if (Disagreement > 0)
+            return FormattableString.Invariant($"ln Z is {Disagreement:0.0e+00} away from that of coarse-graining, so this is another state: use --method blocks");
         double fixedPoint = value.Parts.First(static p => p.Name == "fixed point").Value, bond = value.Parts.First(static p => p.Name == "bond dimension").Value;
         if (!double.IsFinite(value.Value) || !double.IsFinite(value.Error))
             return "not a number: the boundary state is degenerate";
@@ -63,7 +71,15 @@ internal sealed record BranchReading(ImmutableArray<string> Names, bool IsOrdere
             : start;
     }
 
-    private Estimate LogZ => Of(static p => p.LogZ.Real, LogZPower, 1, static p => 100 * p.Residual * p.Residual);
+    /// <summary>ln Z per site with its bar.</summary>
+    public Estimate LogZ
+    {
+        get
+        {
+            Estimate value = Of(static p => p.LogZ.Real, LogZPower, 1, static p => 100 * p.Residual * p.Residual);
+            return Disagreement > 0 ? value with { Parts = value.Parts.Add(new ErrorPart("second method", Disagreement, "distance from a short flow of the default scheme")) } : value;
+        }
+    }
 
     /// <summary>The error of ln Z falls as w where chi resolves the correlation length, and measurably slower, the more so the larger the central charge, at criticality.</summary>
     private double LogZPower => IsResolved ? 1 : 0.5;
@@ -86,23 +102,27 @@ internal sealed record BranchReading(ImmutableArray<string> Names, bool IsOrdere
     private Estimate Entropy(int index)
     {
         Estimate mean = Mean(index), logZ = LogZ;
-        return new Estimate(logZ.Value - mean.Value, [.. logZ.Parts.Zip(mean.Parts, static (a, b) => a with { Value = a.Value + b.Value })]);
+        return new Estimate(logZ.Value - mean.Value, [.. logZ.Parts.Concat(mean.Parts).GroupBy(static p => p.Name).Select(static g => g.First() with { Value = g.Sum(static p => p.Value) })]);
     }
 
     private Estimate Variance(int index)
     {
-        Estimate value = Of(p => p.Variances[index].Value, IsResolved ? MeanPower : DivergentPower, 1e3, static p => 1e3 * p.Residual, skip: Points.Count - 2);
-        return value with { Parts = value.Parts.Add(new ErrorPart("derivative", Points[^1].Variances[index].Error, "extrapolation of the derivative by the field to zero step")) };
+        Estimate value = Of(p => p.Variances[index].Value, IsResolved ? MeanPower : DivergentPower, 1e3, static p => 1e4 * p.Residual, skip: Points.Count - 2);
+        return value with { Parts = value.Parts.Add(new ErrorPart("derivative", DerivativeSafety * Points[^1].Variances[index].Error, "extrapolation of the derivative by the field to zero step")) };
     }
+
+    /// <summary>The points that tell what a larger bond dimension would change; where the last two keep the same states there are no more to keep, and only they count.</summary>
+    private IEnumerable<BranchPoint> Counting(int skip)
+        => Points.Skip(Points.Count > 2 && Points[^1].BondDimension == Points[^2].BondDimension ? Points.Count - 2 : Math.Max(0, skip));
 
     private Estimate Of(Func<BranchPoint, double> read, double power, double conditioning, Func<BranchPoint, double> residual, int skip = 0)
     {
-        (double Value, double Weight)[] values = [.. Points.Skip(Math.Max(0, skip)).Select(p => (read(p), p.SmallestWeight))];
+        (double Value, double Weight)[] values = [.. Counting(skip).Select(p => (read(p), p.SmallestWeight))];
         double value = values[^1].Value;
         return new Estimate(
             value,
             [
-                new ErrorPart("bond dimension", ChiSequence.Remainder(values, power), $"changes over chi = {string.Join(", ", Points.Skip(Math.Max(0, skip)).Select(static p => p.BondDimension))}"),
+                new ErrorPart("bond dimension", ChiSequence.Remainder(values, power), $"changes over chi = {string.Join(", ", Counting(skip).Select(static p => p.BondDimension))}"),
                 new ErrorPart("fixed point", residual(Points[^1]), FormattableString.Invariant($"residual {Points[^1].Residual:0.0e+00} of the boundary state")),
                 new ErrorPart("round-off", conditioning * RoundOff * Math.Max(1, Math.Abs(value)), "a few units in the last place"),
             ]);
