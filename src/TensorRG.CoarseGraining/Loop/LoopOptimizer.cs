@@ -11,6 +11,8 @@ internal sealed class LoopOptimizer<T>
     where T : unmanaged, INumberBase<T>
 {
     public static double Drop = 1e-13;
+    public static double Shift = 1e-12;
+    public static double Omega = 1;
     private readonly TensorAlgebra<T> _algebra;
     private readonly Tensor<T>[] _ring;
     private readonly Tensor<T>[] _pieces;
@@ -29,6 +31,15 @@ internal sealed class LoopOptimizer<T>
 
     public double Target { get; }
     public Tensor<T>[] Pieces => _pieces;
+
+    public void Reset(Tensor<T>[] pieces)
+    {
+        pieces.CopyTo(_pieces, 0);
+        for (int k = 0; k < 8; k++)
+            _own[k] = Own(k);
+        for (int i = 0; i < 4; i++)
+            _mixed[i] = Mixed(i);
+    }
 
     public double Cost()
     {
@@ -65,7 +76,7 @@ internal sealed class LoopOptimizer<T>
         return decrease / Target;
     }
 
-    private Tensor<T> Join(Tensor<T>? suffix, Tensor<T>? prefix)
+    public Tensor<T> Join(Tensor<T>? suffix, Tensor<T>? prefix)
         => suffix is null ? prefix! : prefix is null ? suffix : Product(suffix, prefix);
 
     private double Update(int k, Tensor<T> environment, Tensor<T> mixed)
@@ -75,21 +86,19 @@ internal sealed class LoopOptimizer<T>
         Tensor<T> ns = Applied(environment, piece);
         Tensor<T> residual = TensorAlgebra<T>.Add(w, ns, -T.One);
         Tensor<T> matrix = environment.Permute(3, 1, 2, 0);
-        TruncatedEigen<T> eigen = GradedEigen.Compute(_algebra.Kernels, matrix, new CutRule(int.MaxValue, 0, Drop));
-        Tensor<T> v = eigen.Vectors; // [l, r, y out]
-        Tensor<T> vc = v.Conjugate();
-        Tensor<T> inner = _algebra.Contract(vc, [0, 1], residual, [0, 2]); // [y in, o]
-        Tensor<T> scaled = TensorAlgebra<T>.ScaleLeg(inner, 0, eigen.Values.Power(-1));
-        Tensor<T> delta = _algebra.Contract(v, [2], scaled, [0]).Permute(0, 2, 1);
+        using Tensor<T> ordered = residual.Permute(0, 2, 1);
+        double size = TensorAlgebra<T>.LargestMagnitude(matrix);
+        using Tensor<T> solved = GradedSolve.Positive(matrix, Shift * size, ordered);
+        Tensor<T> delta = solved.Permute(0, 2, 1);
         double gain = 0;
         using (Tensor<T> d = delta.Conjugate())
             gain = Scalar.RealPart(_algebra.Contract(d, [0, 1, 2], residual, [0, 1, 2]).Elements[0]);
-        _pieces[k] = TensorAlgebra<T>.Add(piece, delta, T.One);
-        return gain;
+        _pieces[k] = TensorAlgebra<T>.Add(piece, delta, Scalar.FromReal<T>(Omega));
+        return Omega * (2 - Omega) * gain;
     }
 
     /// <summary>W[l, o, r].</summary>
-    private Tensor<T> Right(int k, Tensor<T> g)
+    public Tensor<T> Right(int k, Tensor<T> g)
     {
         int i = k / 2;
         if (k % 2 == 0)
@@ -106,15 +115,26 @@ internal sealed class LoopOptimizer<T>
     }
 
     /// <summary>N S from [a, a*, b, b*] with a at the right of the piece, b at its left.</summary>
-    private Tensor<T> Applied(Tensor<T> environment, Tensor<T> piece)
+    public Tensor<T> Applied(Tensor<T> environment, Tensor<T> piece)
         => _algebra.Contract(environment, [2, 0], piece, [0, 2]).Permute(1, 2, 0); // [a*, b*, o] -> [l, o, r]
 
-    private Tensor<T> Own(int k)
+    public Tensor<T> OwnOf(int k) => _own[k];
+
+    public Tensor<T> Transfer(Tensor<T> upper, Tensor<T> lower)
     {
-        using Tensor<T> dual = _pieces[k].Conjugate();
-        using Tensor<T> e = _algebra.Contract(_pieces[k], [1], dual, [1]);
+        using Tensor<T> dual = lower.Conjugate();
+        using Tensor<T> e = _algebra.Contract(upper, [1], dual, [1]);
         return e.Permute(0, 2, 1, 3);
     }
+
+    /// <summary>Of the four tensors: the product of the other three mixed transfers.</summary>
+    public Tensor<T>[] MixedEnvironments()
+    {
+        Tensor<T> front = Product(_mixed[0], _mixed[1]), back = Product(_mixed[2], _mixed[3]);
+        return [Product(_mixed[1], back), Product(back, _mixed[0]), Product(_mixed[3], front), Product(front, _mixed[2])];
+    }
+
+    private Tensor<T> Own(int k) => Transfer(_pieces[k], _pieces[k]);
 
     private Tensor<T> Mixed(int i)
     {
@@ -124,7 +144,7 @@ internal sealed class LoopOptimizer<T>
         return f.Permute(0, 2, 1, 3);
     }
 
-    private Tensor<T> Product(Tensor<T> a, Tensor<T> b) => _algebra.Contract(a, [2, 3], b, [0, 1]);
+    public Tensor<T> Product(Tensor<T> a, Tensor<T> b) => _algebra.Contract(a, [2, 3], b, [0, 1]);
 
     private double Closed(Tensor<T>[] factors)
     {

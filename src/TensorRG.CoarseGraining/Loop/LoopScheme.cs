@@ -10,10 +10,14 @@ internal sealed class LoopScheme<T>(TensorAlgebra<T> algebra, SchemeSettings set
 {
     public static int MaxSweeps = 40;
     public static double Stop = 1e-3;
+    public static int Memory = 0;
+    public static int Newton = 1000;
+    public static int Match = -1;
+    public static int Repeats = 1;
     public static double Alpha = 0;
     public static bool Filter = true;
     public static bool Verbose;
-    public static bool WeightedStart = true;
+    public static bool WeightedStart = false;
     private const string Site = "site";
     private const string First = "a";
     private const string Second = "b";
@@ -28,13 +32,20 @@ internal sealed class LoopScheme<T>(TensorAlgebra<T> algebra, SchemeSettings set
         if (state.Tensors.TryGetValue(Site, out Tensor<T>? site))
             return new CoarseStep<T>(State(site.Clone(), site.Clone()), 0, []);
         (Tensor<T> a, Tensor<T> b) = (state[First], state[Second]);
+        double beforeA = TensorAlgebra<T>.Norm(a), beforeB = TensorAlgebra<T>.Norm(b);
         BondWeights[]? weights = null;
         if (Filter)
-            (a, b, weights) = _filter.Apply(a, b);
+        {
+            (a, b) = (TensorAlgebra<T>.Scale(a, Scalar.FromReal<T>(1 / TensorAlgebra<T>.Norm(a))), TensorAlgebra<T>.Scale(b, Scalar.FromReal<T>(1 / TensorAlgebra<T>.Norm(b))));
+        }
+
+        if (Filter)
+            for (int n = 0; n < Repeats; n++)
+                (a, b, weights) = _filter.Apply(a, b);
         double normA = TensorAlgebra<T>.Norm(a), normB = TensorAlgebra<T>.Norm(b);
         a = TensorAlgebra<T>.Scale(a, Scalar.FromReal<T>(1 / normA));
         b = TensorAlgebra<T>.Scale(b, Scalar.FromReal<T>(1 / normB));
-        double scale = normA * normB;
+        double scale = normA * normB * (Filter ? beforeA * beforeB : 1);
         Tensor<T>[] ring = PlaquetteRing.Of(a, b);
         // outer legs: ring[0]: l, u ; bonds kinds: A.r 0, B.d(A.u) 1, A.l 2, B.u(A.d) 3.
         // A: u 1, l 2, d 3, r 0.  B: u 3, l 0, d 1, r 2.
@@ -74,16 +85,19 @@ internal sealed class LoopScheme<T>(TensorAlgebra<T> algebra, SchemeSettings set
             var optimizer = new LoopOptimizer<T>(algebra, ring, pieces);
             double cost = optimizer.Cost(), start = cost;
             int sweep = 0;
+            var newton = new GaussNewton<T>(algebra, optimizer);
+            var sweeps = new AcceleratedSweeps<T>(optimizer, Memory);
             for (; sweep < MaxSweeps; sweep++)
             {
-                double gain = optimizer.Sweep();
-                cost -= gain;
+                double next = sweep >= Newton ? newton.Advance(cost) : Memory < 2 ? cost - optimizer.Sweep() : sweeps.Advance(cost);
+                double gain = cost - next;
+                cost = next;
                 if (gain < Stop * Math.Max(cost, 1e-16))
                     break;
             }
 
             if (Verbose)
-                Console.Error.WriteLine($"  step {step} bonds {a.Legs[0].Dimension} {a.Legs[1].Dimension} svd {discarded:E1} cost {start:E2} -> {cost:E2} ({optimizer.Cost():E2}) {sweep} sweeps, weights min {(weights is null ? 0 : weights.Min(w => w.Values.Min(v => v.Min()))):E1}");
+                Console.Error.WriteLine($"  step {step} bonds {a.Legs[0].Dimension} {a.Legs[1].Dimension} svd {discarded:E1} cost {start:E2} -> {cost:E2} ({optimizer.Cost():E2}) {sweep} sweeps {sweeps.Taken}/{sweeps.Rejected} cg {newton.Inner} mu {newton.Mu:E1} weights min {(weights is null ? 0 : weights.Min(w => w.Values.Min(v => v.Min()))):E1}");
         }
 
         if (Filter && Alpha != 0)
@@ -95,6 +109,14 @@ internal sealed class LoopScheme<T>(TensorAlgebra<T> algebra, SchemeSettings set
 
         Tensor<T> x = Assemble(pieces[3], pieces[0], pieces[7], pieces[4], false);
         Tensor<T> y = Assemble(pieces[6], pieces[5], pieces[2], pieces[1], true);
+        if (Match >= 0)
+        {
+            double ratio = BlockTorus.Before(algebra, a, b, Match) - BlockTorus.After(algebra, x, y, Match);
+            if (Verbose)
+                Console.Error.WriteLine($"      ln ratio {ratio:E2}, shift per site {ratio / Math.Pow(2, step):E2}; others {string.Join(" ", Enumerable.Range(0, 5).Select(k => (BlockTorus.Before(algebra, a, b, k) - BlockTorus.After(algebra, x, y, k)).ToString("E2")))}");
+            scale *= Math.Exp(ratio / 2);
+        }
+
         return new CoarseStep<T>(State(TensorAlgebra<T>.Scale(x, Scalar.FromReal<T>(scale)), TensorAlgebra<T>.Scale(y, Scalar.FromReal<T>(scale))), discarded, notices);
     }
 
