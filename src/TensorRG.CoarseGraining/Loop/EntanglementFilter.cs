@@ -31,6 +31,7 @@ internal sealed class EntanglementFilter<T>(TensorAlgebra<T> algebra)
     /// <summary>How often the filter is applied.</summary>
     private const int Repeats = 3;
 
+    private readonly RingTransfers<T> _transfers = new(algebra);
     private readonly CutRule _cut = new(int.MaxValue, 0, Floor);
 
     /// <summary>Both tensors with all four kinds of bonds filtered.</summary>
@@ -53,6 +54,7 @@ internal sealed class EntanglementFilter<T>(TensorAlgebra<T> algebra)
         Tensor<T>[] ring = PlaquetteRing.Of(a, b);
         Tensor<T>[] left = FromLeft(ring), right = FromRight(ring);
         var weights = new BondWeights[4];
+        Tensor<T>[] inner = [.. ring];
         for (int bond = 0; bond < 4; bond++)
         {
             using Tensor<T> product = algebra.Contract(left[bond], [1], right[bond], [1]);
@@ -62,9 +64,22 @@ internal sealed class EntanglementFilter<T>(TensorAlgebra<T> algebra)
             bool fromA = bond % 2 == 0;
             a = Replace(a, PlaquetteRing.LegOfA(bond), fromA ? toNext : toPrevious);
             b = Replace(b, PlaquetteRing.LegOfB(bond), fromA ? toPrevious : toNext);
+            inner[bond] = Replace(inner[bond], 3, toNext);
+            inner[(bond + 1) % 4] = Replace(inner[(bond + 1) % 4], 0, toPrevious);
         }
 
-        return new FilteredPair<T>(a, b, weights);
+        return new FilteredPair<T>(TensorAlgebra<T>.Scale(a, Lost(ring, inner)), b, weights);
+    }
+
+    /// <summary>
+    /// The number that makes up for what was removed: a line that stays in the plaquette is a factor of the ring, and the factors that settled know only its
+    /// leading part. There is one such plaquette for each pair A, B.
+    /// </summary>
+    private T Lost(Tensor<T>[] ring, Tensor<T>[] filtered)
+    {
+        T overlap = _transfers.Trace([.. ring.Zip(filtered, _transfers.Whole)]);
+        double norm = _transfers.Closed([.. filtered.Select(_transfers.Whole)]);
+        return norm > 0 ? overlap / Scalar.FromReal<T>(norm) : T.One;
     }
 
     /// <summary>P[bond, kept] = s^(-1/2) sum over k of F[k, bond] conj(W[k, kept]).</summary>

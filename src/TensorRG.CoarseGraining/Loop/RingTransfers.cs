@@ -18,9 +18,12 @@ internal sealed class RingTransfers<T>(TensorAlgebra<T> algebra)
     }
 
     /// <summary>Of a tensor M[l, o, o', r] with itself.</summary>
-    public Tensor<T> Whole(Tensor<T> tensor)
+    public Tensor<T> Whole(Tensor<T> tensor) => Whole(tensor, tensor);
+
+    /// <summary>Of a tensor M[l, o, o', r] with another one that has the same outer legs.</summary>
+    public Tensor<T> Whole(Tensor<T> tensor, Tensor<T> other)
     {
-        using Tensor<T> dual = tensor.Conjugate();
+        using Tensor<T> dual = other.Conjugate();
         return OfWhole(tensor, dual);
     }
 
@@ -39,12 +42,15 @@ internal sealed class RingTransfers<T>(TensorAlgebra<T> algebra)
     public Tensor<T> Join(Tensor<T>? a, Tensor<T>? b) => a is null ? b!.Clone() : b is null ? a.Clone() : Product(a, b);
 
     /// <summary>The real part of the trace of a product round the ring.</summary>
-    public double Closed(IReadOnlyList<Tensor<T>> factors)
+    public double Closed(IReadOnlyList<Tensor<T>> factors) => Scalar.RealPart(Trace(factors));
+
+    /// <summary>The trace of a product round the ring.</summary>
+    public T Trace(IReadOnlyList<Tensor<T>> factors)
     {
         int half = factors.Count / 2;
         using Tensor<T> left = Chain(factors.Take(half)), right = Chain(factors.Skip(half));
         using Tensor<T> number = algebra.Contract(left, [2, 3, 0, 1], right, [0, 1, 2, 3]);
-        return Scalar.RealPart(number.Elements[0]);
+        return number.Elements[0];
     }
 
     private Tensor<T> Chain(IEnumerable<Tensor<T>> factors)
