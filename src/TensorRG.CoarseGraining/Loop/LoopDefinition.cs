@@ -2,7 +2,7 @@ using TensorRG.Tensors;
 
 namespace TensorRG.CoarseGraining.Loop;
 
-/// <summary>Loop-optimised tensor-network renormalisation. Not registered: its error wanders by more than its cost explains (DEVELOPERS.md, Decisions).</summary>
+/// <summary>Loop-optimised tensor-network renormalisation. Not registered yet: at equal time it is no better for ln Z than what is (DEVELOPERS.md, Decisions).</summary>
 internal sealed class LoopDefinition : SchemeDefinition
 {
     /// <inheritdoc/>
