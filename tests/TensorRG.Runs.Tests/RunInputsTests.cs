@@ -10,6 +10,8 @@ public class RunInputsTests
     private static readonly Dictionary<string, Func<RunInputs, RunInputs>> Changes = new()
     {
         [nameof(RunInputs.Model)] = i => i with { Model = "potts" },
+        [nameof(RunInputs.Definition)] = i => i with { Definition = "name = \"mine\"" },
+        [nameof(RunInputs.NetworkForm)] = i => i with { NetworkForm = "row" },
         [nameof(RunInputs.Parameters)] = i => i with { Parameters = i.Parameters.SetItem("J", 2) },
         [nameof(RunInputs.Scheme)] = i => i with { Scheme = "hotrg" },
         [nameof(RunInputs.SchemeOptions)] = i => i with { SchemeOptions = i.SchemeOptions.SetItem("exponent", -0.25) },

@@ -81,8 +81,8 @@ internal sealed record BranchReading(ImmutableArray<string> Names, bool IsOrdere
         }
     }
 
-    /// <summary>The error of ln Z falls as w where chi resolves the correlation length, and measurably slower, the more so the larger the central charge, at criticality.</summary>
-    private double LogZPower => IsResolved ? 1 : 0.5;
+    /// <summary>The error of ln Z falls about as w where chi resolves the correlation length, and measurably slower, the more so the larger the central charge, at criticality.</summary>
+    private double LogZPower => IsResolved ? 0.75 : 0.5;
 
     /// <summary>Smallest scaling dimension over 2 that is looked for: of the energy at a critical point (2/5 for 3-state Potts), of an order parameter (1/8 for Ising).</summary>
     private double MeanPower => (IsResolved, IsOrdered) switch

@@ -13,7 +13,7 @@ internal sealed class RandomSystem
 
     public RandomSystem(int seed)
     {
-        // The seed says everything: CsCheck prints it when a case fails.
+        // The seed says everything: the message of a failure names it.
 #pragma warning disable CA5394 // Random numbers for tests need no secrecy.
         random = new Random(seed);
         var lattice = (LatticeKind)random.Next(4);

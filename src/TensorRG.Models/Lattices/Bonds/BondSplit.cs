@@ -10,7 +10,7 @@ namespace TensorRG.Models.Lattices.Bonds;
 internal sealed class BondSplit
 {
     private const double DroppedBond = 1e-15;
-    private const double DroppedWeight = 1e-14;
+    private const double DroppedWeight = 1e-20;
     private const double Dependent = 1e-13;
     private const double DroppedImpurity = 1e-13;
 
