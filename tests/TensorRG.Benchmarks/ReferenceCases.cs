@@ -39,7 +39,7 @@ internal static class ReferenceCases
     private static IEnumerable<ReferenceCase> OtherIsing() =>
     [
         new("ising-triangular-logz-tc", "ising-triangular", [("T", 4 / Math.Log(3)), ("J", 1)], "ln-z", 48),
-        new("ising-triangular-af-entropy", "ising-triangular", [("T", 0.02), ("J", -1)], "entropy", 64),
+        new("ising-triangular-af-entropy", "ising-triangular", [("T", 0.02), ("J", -1)], "entropy", 24),
         new("ising-honeycomb-logz-tc", "ising-honeycomb", [("T", 2 / Math.Log(2 + Math.Sqrt(3))), ("J", 1)], "ln-z", 48),
     ];
 
@@ -48,18 +48,18 @@ internal static class ReferenceCases
         foreach (int q in (int[])[2, 3, 4, 5, 7, 10])
         {
             (string, double)[] set = [("q", q), ("T", 1 / Math.Log(1 + Math.Sqrt(q)))];
-            yield return new ReferenceCase(FormattableString.Invariant($"potts{q}-logz-tc"), "potts", set, "ln-z", 48);
+            yield return new ReferenceCase(FormattableString.Invariant($"potts{q}-logz-tc"), "potts", set, "ln-z", 32);
             if (q <= 4)
-                yield return new ReferenceCase(FormattableString.Invariant($"potts{q}-u-tc"), "potts", set, "energy", 48);
+                yield return new ReferenceCase(FormattableString.Invariant($"potts{q}-u-tc"), "potts", set, "energy", 32);
         }
     }
 
     private static IEnumerable<ReferenceCase> Vertices() =>
     [
-        new("ice-square", "six-vertex", [], "entropy", 64),
-        new("f-model-tc", "six-vertex", [("a", 0.5), ("b", 0.5), ("c", 1)], "ln-z", 64),
-        new("dimers-square", "dimers", [], "entropy", 64),
-        new("dimers-honeycomb", "dimers-honeycomb", [], "entropy", 64),
+        new("ice-square", "six-vertex", [], "entropy", 32),
+        new("f-model-tc", "six-vertex", [("a", 0.5), ("b", 0.5), ("c", 1)], "ln-z", 48),
+        new("dimers-square", "dimers", [], "entropy", 32),
+        new("dimers-honeycomb", "dimers-honeycomb", [], "entropy", 32),
     ];
 
     private static IEnumerable<ReferenceCase> Exclusion()

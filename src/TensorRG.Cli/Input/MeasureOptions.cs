@@ -9,12 +9,14 @@ namespace TensorRG.Cli.Input;
 internal sealed class MeasureOptions
 {
     private const int DefaultBondDimension = 32;
+    private const int DefaultOfBlocks = 16;
+    private const string Blocks = "blocks";
     private const int LargestTorus = 1 << 20;
 
     private readonly ModelOptions _model = new();
     private readonly MachineOptions _machine;
-    private readonly Option<int> _bondDimension = NumberOption.Whole("--bond-dimension", "Most states kept on a bond (chi).", DefaultBondDimension, 1, FlowOptions.LargestBondDimension);
-    private readonly Option<string> _method = ChoiceOption.OneOf("--method", "'boundary': infinite lattice, from fixed points of the row-to-row transfer matrix; 'blocks': HOTRG with impurity tensors.", "boundary", "boundary", "blocks");
+    private readonly Option<int> _bondDimension = NumberOption.Whole("--bond-dimension", "Most states kept on a bond (chi); with blocks, which cost chi^7, the default is 16.", DefaultBondDimension, 1, FlowOptions.LargestBondDimension);
+    private readonly Option<string> _method = ChoiceOption.OneOf("--method", "'boundary': infinite lattice, from fixed points of the row-to-row transfer matrix; 'blocks': HOTRG with impurity tensors, the default with --torus.", "boundary", "boundary", Blocks);
     private readonly Option<string> _form = ChoiceOption.OneOf("--form", "Form of the tensor network.", "auto", NetworkForms.Names);
     private readonly Option<long> _seed = NumberOption.Long("--seed", "Seed of the starting states.", 1);
 
@@ -53,14 +55,18 @@ internal sealed class MeasureOptions
     {
         Model = _model.Read(result),
         Quantities = result.GetValue(_observables) is { } text ? QuantityList.Read(text) : null,
-        Method = result.GetRequiredValue(_method),
-        BondDimension = result.GetRequiredValue(_bondDimension),
+        Method = Method(result),
+        BondDimension = Method(result) == Blocks && result.GetResult(_bondDimension) is not { Implicit: false } ? DefaultOfBlocks : result.GetRequiredValue(_bondDimension),
         TorusLength = result.GetValue(_torus),
         Form = NetworkForms.Read(result.GetRequiredValue(_form)),
         Seed = result.GetRequiredValue(_seed),
         Threads = result.GetRequiredValue(_machine.Threads),
         Backend = result.GetRequiredValue(_machine.Backend),
     };
+
+    /// <summary>A torus needs blocks: where no method is given it chooses them.</summary>
+    private string Method(ParseResult result)
+        => result.GetValue(_torus) is not null && result.GetResult(_method) is not { Implicit: false } ? Blocks : result.GetRequiredValue(_method);
 
     private static int? ReadTorus(ArgumentResult result)
     {

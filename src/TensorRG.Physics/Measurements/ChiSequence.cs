@@ -6,7 +6,7 @@ namespace TensorRG.Physics.Measurements;
 internal static class ChiSequence
 {
     /// <summary>Bar over the remainder that the steepest slope predicts; see the calibration in DEVELOPERS.md.</summary>
-    private const double Safety = 2;
+    private const double Safety = 3;
 
     /// <summary>Half, three quarters and all of the largest bond dimension, without repetitions.</summary>
     /// <param name="largest">The largest bond dimension.</param>
