@@ -84,11 +84,11 @@ internal sealed record BranchReading(ImmutableArray<string> Names, bool IsOrdere
     /// <summary>The error of ln Z falls about as w where chi resolves the correlation length, and measurably slower, the more so the larger the central charge, at criticality.</summary>
     private double LogZPower => IsResolved ? 0.75 : 0.5;
 
-    /// <summary>Smallest scaling dimension over 2 that is looked for: of the energy at a critical point (2/5 for 3-state Potts), of an order parameter (1/8 for Ising).</summary>
+    /// <summary>Smallest scaling dimension over 2 that is looked for: of the energy at a critical point (1/2 for 4-state Potts), of an order parameter (1/8 for Ising).</summary>
     private double MeanPower => (IsResolved, IsOrdered) switch
     {
         (true, _) => 0.5,
-        (false, false) => 0.4,
+        (false, false) => 0.25,
         (false, true) => DivergentPower,
     };
 
