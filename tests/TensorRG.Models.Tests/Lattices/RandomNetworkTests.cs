@@ -6,7 +6,7 @@ public sealed class RandomNetworkTests
 {
     private static readonly NetworkForm[] Forms = [NetworkForm.Auto, NetworkForm.Bond, NetworkForm.Face, NetworkForm.Row];
 
-    private const int Systems = 110;
+    private const int Systems = 80;
 
     [Fact]
     public void Random_systems_equal_the_sum_over_configurations_in_every_form()

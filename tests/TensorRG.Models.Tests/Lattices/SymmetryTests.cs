@@ -187,7 +187,7 @@ public sealed class SymmetryTests
         Assert.Contains("excluded", Refused(none, new NetworkOptions()), StringComparison.Ordinal);
         LatticeSystem noLine = Systems.Edges(LatticeKind.Square, 2, static s => s[0] == 0 && s[2] == 1 ? 1 : 0);
         Assert.Contains("vanish", Refused(noLine, new NetworkOptions()), StringComparison.Ordinal);
-        LatticeSystem many = Systems.Pairs(LatticeKind.Square, 30, static (a, b) => Math.Cos(a * b), Cluster.Diagonal);
+        LatticeSystem many = Systems.Pairs(LatticeKind.Square, 120, static (a, b) => Math.Cos(a * b), Cluster.Diagonal);
         Assert.Contains("fewer states", Refused(many, new NetworkOptions { Form = NetworkForm.Face }), StringComparison.Ordinal);
     }
 
