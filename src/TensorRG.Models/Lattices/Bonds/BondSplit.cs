@@ -10,9 +10,10 @@ namespace TensorRG.Models.Lattices.Bonds;
 internal sealed class BondSplit
 {
     private const double DroppedBond = 1e-15;
-    private const double DroppedWeight = 1e-20;
+    private const double DroppedWeight = 1e-14;
     private const double Dependent = 1e-13;
     private const double DroppedImpurity = 1e-13;
+    private const double OwnDirection = 0.1;
 
     private readonly double[] scale;
     private readonly bool isReal;
@@ -134,9 +135,36 @@ internal sealed class BondSplit
             foreach (Complex[,] impurity in impurities)
                 rows = [.. rows.Zip(Remainder(Rows(sectors[k].Vectors, impurity), known), static (a, b) => a.Concat(b).ToArray())];
             (Complex[,] u, double[] s) = RowRotations.Decompose(rows);
-            int sector = k;
-            states.AddRange(Enumerable.Range(0, size - known.Length).Where(j => s[j] > DroppedImpurity).Select(j => (sector, Column(u, j), 1.0)));
+            foreach (Complex[] vector in Orthonormal(Enumerable.Range(0, size - known.Length).Where(j => s[j] > DroppedImpurity).Select(j => Column(u, j)), known))
+                states.Add((k, vector, 1));
         }
+    }
+
+    // A direction of small s carries round-off along the known ones, and Out In would count those twice. What is left of it after they are taken
+    // out is a direction of its own, or was round-off altogether.
+    private static List<Complex[]> Orthonormal(IEnumerable<Complex[]> candidates, Complex[][] known)
+    {
+        List<Complex[]> found = [];
+        foreach (Complex[] candidate in candidates)
+        {
+            Complex[] vector = Without(Without(candidate, [.. known, .. found]), [.. known, .. found]);
+            double norm = Math.Sqrt(vector.Sum(static x => (x.Real * x.Real) + (x.Imaginary * x.Imaginary)));
+            if (norm > OwnDirection)
+                found.Add([.. vector.Select(x => x / norm)]);
+        }
+        return found;
+    }
+
+    private static Complex[] Without(Complex[] vector, Complex[][] known)
+    {
+        Complex[] result = [.. vector];
+        foreach (Complex[] other in known)
+        {
+            Complex overlap = other.Zip(result, static (a, b) => Complex.Conjugate(a) * b).Aggregate(Complex.Zero, static (a, b) => a + b);
+            for (int i = 0; i < result.Length; i++)
+                result[i] -= overlap * other[i];
+        }
+        return result;
     }
 
     // (1 - U U^H) M, with M scaled to a largest row of norm 1.
