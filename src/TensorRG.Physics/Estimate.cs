@@ -10,6 +10,14 @@ public sealed record Estimate(double Value, ImmutableArray<ErrorPart> Parts)
     /// <summary>The error bar: the sum of the parts.</summary>
     public double Error => Parts.Sum(static p => p.Value);
 
+    /// <summary>The difference to another number: bars add up, part by part of one name.</summary>
+    /// <param name="other">What is taken away.</param>
+    public Estimate Minus(Estimate other)
+    {
+        ArgumentNullException.ThrowIfNull(other);
+        return new(Value - other.Value, [.. Parts.Concat(other.Parts).GroupBy(static p => p.Name).Select(static g => g.First() with { Value = g.Sum(static p => p.Value) })]);
+    }
+
     /// <summary>The number and its bar multiplied by an exact factor.</summary>
     /// <param name="factor">Any number.</param>
     public Estimate Times(double factor)

@@ -44,7 +44,7 @@ internal sealed class BlockReading
         {
             QuantityKind.LogZ => (LogZ, last.TorusPhase / last.Sites),
             QuantityKind.FreeEnergy => (LogZ.Times(request.Factor), request.Factor * last.TorusPhase / last.Sites),
-            QuantityKind.Entropy => (Minus(LogZ, Moment(request, 1)), 0),
+            QuantityKind.Entropy => (LogZ.Minus(Moment(request, 1)), 0),
             QuantityKind.Variance => (Variance(request).Times(request.Factor), 0),
             QuantityKind.Binder => (_moments.Binder(LastStep, IndexOf(request)), 0),
             QuantityKind.Mean when _breaks && !IsTorus => (RootMeanSquare(request), 0),
@@ -103,7 +103,4 @@ internal sealed class BlockReading
 
     private static Estimate WithSize(Estimate value, double change)
         => value with { Parts = value.Parts.Add(new ErrorPart("size", Math.Abs(change), "how much the last doublings still moved it")) };
-
-    private static Estimate Minus(Estimate a, Estimate b)
-        => new(a.Value - b.Value, [.. a.Parts.Concat(b.Parts).GroupBy(static p => p.Name).Select(static g => g.First() with { Value = g.Sum(static p => p.Value) })]);
 }

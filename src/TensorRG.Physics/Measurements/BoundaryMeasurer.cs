@@ -13,6 +13,9 @@ namespace TensorRG.Physics.Measurements;
 /// <param name="backend">Where the linear algebra runs.</param>
 internal sealed class BoundaryMeasurer(Backend backend) : IMeasurer
 {
+    /// <summary>Blocks cost chi^7.</summary>
+    private const int LargestOfBlocks = 16;
+
     /// <inheritdoc/>
     public Measurement Measure(MeasurementInputs inputs, IProgress<string>? progress, CancellationToken stop)
     {
@@ -21,12 +24,27 @@ internal sealed class BoundaryMeasurer(Backend backend) : IMeasurer
         LatticeSystem system = QuantityCatalogue.SystemOf(inputs.Parameters);
         var plan = new BranchPlan(system, inputs, requests);
         Estimate second = FlowCheck.LogZ(plan.Symmetric.Model.Network, backend);
-        BranchReading symmetric = Read(plan.Symmetric);
-        if ((symmetric.Disagreement > 0 || symmetric.LogZ.Error > second.Error) && inputs.Form == NetworkForm.Auto && plan.Symmetric.Model.Form == NetworkForm.Row)
+        BranchReading? symmetric = Dominant(plan.Symmetric);
+        if (inputs.Form == NetworkForm.Auto && plan.Symmetric.Model.Form == NetworkForm.Row && !(symmetric?.LogZ.Error <= second.Error))
             return Measure(inputs with { Form = NetworkForm.Face }, progress, stop); // Rows that are far from symmetric can lead astray.
+        if (symmetric is null)
+            return Blocks(inputs, progress, stop);
         BranchReading[] ordered = [.. Ordered(plan)];
         ImmutableArray<Measured> values = [.. requests.Select(r => Assemble(r, inputs.Parameters, ordered.FirstOrDefault(o => o.Has(r)) ?? symmetric))];
         return new Measurement(values, [.. plan.Remarks, .. ordered.Select(o => o.OrderRemark(symmetric))]);
+
+        // Null where no fixed point is found, or one that is not the dominant one.
+        BranchReading? Dominant(Branch branch)
+        {
+            try
+            {
+                return Read(branch) is { Disagreement: 0 } reading ? reading : null;
+            }
+            catch (DecompositionException)
+            {
+                return null;
+            }
+        }
 
         BranchReading Read(Branch branch)
         {
@@ -42,6 +60,15 @@ internal sealed class BoundaryMeasurer(Backend backend) : IMeasurer
             if (p.Alternating is { } alternating)
                 yield return Read(alternating);
         }
+    }
+
+    /// <summary>The other method, where this one fails: it has no fixed point to miss.</summary>
+    private Measurement Blocks(MeasurementInputs inputs, IProgress<string>? progress, CancellationToken stop)
+    {
+        MeasurementInputs other = inputs with { Method = "blocks", BondDimension = Math.Min(inputs.BondDimension, LargestOfBlocks) };
+        Measurement measured = new BlockMeasurer(backend).Measure(other, progress, stop);
+        string remark = FormattableString.Invariant($"The boundary method finds no fixed point that agrees with coarse-graining, so these are numbers of the method blocks at bond dimension {other.BondDimension}.");
+        return measured with { Remarks = [remark, .. measured.Remarks] };
     }
 
     private IReadOnlyList<BranchPoint> Run<T>(Branch branch, MeasurementInputs inputs, CancellationToken stop)

@@ -55,7 +55,7 @@ internal sealed record BranchReading(ImmutableArray<string> Names, bool IsOrdere
     {
         QuantityKind.LogZ => (LogZ, Points[^1].LogZ.Imaginary),
         QuantityKind.FreeEnergy => (LogZ.Times(request.Factor), request.Factor * Points[^1].LogZ.Imaginary),
-        QuantityKind.Entropy => (Entropy(IndexOf(request)), 0),
+        QuantityKind.Entropy => (LogZ.Minus(Mean(IndexOf(request))), 0),
         QuantityKind.Variance => (Variance(IndexOf(request)).Times(request.Factor), 0),
         _ => (Mean(IndexOf(request)), Points[^1].Means[IndexOf(request)].Imaginary),
     };
@@ -98,12 +98,6 @@ internal sealed record BranchReading(ImmutableArray<string> Names, bool IsOrdere
     private int IndexOf(QuantityRequest request) => Names.IndexOf(request.Observable!.Name);
 
     private Estimate Mean(int index) => Of(p => p.Means[index].Real, MeanPower, 10, static p => 10 * p.Residual);
-
-    private Estimate Entropy(int index)
-    {
-        Estimate mean = Mean(index), logZ = LogZ;
-        return new Estimate(logZ.Value - mean.Value, [.. logZ.Parts.Concat(mean.Parts).GroupBy(static p => p.Name).Select(static g => g.First() with { Value = g.Sum(static p => p.Value) })]);
-    }
 
     private Estimate Variance(int index)
     {

@@ -28,6 +28,13 @@ public class UserModelTests
         Assert.True(compared >= 200, $"{compared} of {Files} files were compared");
     }
 
+    // Once off by 6e-6, 8e-11 and 4e-11: directions that only impurities reach were not quite orthogonal to the others.
+    [Theory]
+    [InlineData(219339579)]
+    [InlineData(2020263008)]
+    [InlineData(2007)]
+    public void Files_that_once_failed(int seed) => Assert.True(Agrees(seed));
+
     // False where no configuration is left.
     private static bool Agrees(int seed)
     {
